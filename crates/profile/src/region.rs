@@ -1,0 +1,40 @@
+//! The section of one body: a loop less the loops inside it.
+
+use crate::{Bounds, Edge, Loop};
+
+/// The section of one body: the area inside the outer loop less the voids.
+///
+/// Legal by construction: the outer loop runs counter-clockwise, the voids clockwise (the material is on the left of
+/// travel everywhere), every loop is simple, none crosses another, every void lies inside, r >= 0 throughout.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Region {
+    pub(crate) outer: Loop,
+    pub(crate) voids: Vec<Loop>,
+}
+
+impl Region {
+    /// The outer loop, counter-clockwise.
+    pub fn outer(&self) -> &Loop {
+        &self.outer
+    }
+
+    /// The closed holes inside the section, clockwise.
+    pub fn voids(&self) -> &[Loop] {
+        &self.voids
+    }
+
+    /// All loops, the outer one first.
+    pub fn loops(&self) -> impl Iterator<Item = &Loop> {
+        std::iter::once(&self.outer).chain(&self.voids)
+    }
+
+    /// All edges, loop by loop.
+    pub fn edges(&self) -> impl Iterator<Item = &Edge> {
+        self.loops().flat_map(Loop::edges)
+    }
+
+    /// A box that holds it.
+    pub fn bounds(&self) -> Bounds {
+        self.outer.bounds()
+    }
+}

@@ -10,9 +10,11 @@
 mod fault;
 mod model;
 pub mod outline;
+mod read;
 
 pub use fault::{Fault, Faults, Label, Span};
 pub use model::{
     Body, Expectation, Expected, LengthUnit, Material, OwnMaterial, Part, Size, StepOrigin,
     Tolerance,
 };
+pub use read::{Neighbours, Setting, length, read, schema, starter};

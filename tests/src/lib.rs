@@ -1,0 +1,5 @@
+//! What the checks share: figures as a page prints them.
+
+mod printed;
+
+pub use printed::Printed;

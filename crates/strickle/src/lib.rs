@@ -1,1 +1,15 @@
-//! strickle
+//! What a part of revolution weighs, exactly, and the proof that its mesh is that part.
+//!
+//! A [`Study`] takes a part that has been read and finds everything out about it; what it found is a [`Record`], which is
+//! also the machine output. The command line and the window only show it. The library does no input or output.
+
+mod material;
+pub mod record;
+mod study;
+
+pub use material::BodyMaterial;
+pub use record::Record;
+pub use study::{Source, Study};
+
+/// Version of the program.
+pub const VERSION: &str = env!("CARGO_PKG_VERSION");

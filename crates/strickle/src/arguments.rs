@@ -59,16 +59,17 @@ pub(crate) const ENVIRONMENT: [(&str, &str); 2] = [
 
 /// Exit status and environment, for the end of the long help.
 fn after_help() -> String {
-    let rows = |rows: &[(&str, &str)], width: usize| {
-        rows.iter()
-            .map(|(word, meaning)| format!("\n  {word:<width$}  {meaning}"))
-            .collect::<String>()
+    let section = |title: &str, rows: &[(&str, &str)]| {
+        let width = rows.iter().map(|(word, _)| word.len()).max().unwrap_or(0);
+        let rows = rows
+            .iter()
+            .map(|(word, meaning)| format!("  {word:<width$}  {meaning}"));
+        let lines: Vec<String> = std::iter::once(title.to_owned()).chain(rows).collect();
+        lines.join("\n")
     };
-    format!(
-        "Exit status:{}\n\nEnvironment:{}",
-        rows(&EXIT_STATUS, 1),
-        rows(&ENVIRONMENT, 19)
-    )
+    let exit_status = section("Exit status:", &EXIT_STATUS);
+    let environment = section("Environment:", &ENVIRONMENT);
+    format!("{exit_status}\n\n{environment}")
 }
 
 /// When to use colours.

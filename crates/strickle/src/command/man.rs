@@ -40,9 +40,9 @@ fn section(command: &clap::Command) -> io::Result<String> {
     // The global options are told once, for the program.
     let command = command
         .clone()
-        .mut_args(|argument| match argument.is_global_set() {
-            true => argument.hide(true),
-            false => argument,
+        .mut_args(|argument| {
+            let global = argument.is_global_set();
+            argument.hide(global)
         })
         .disable_help_flag(true)
         .disable_version_flag(true);
@@ -64,11 +64,15 @@ fn section(command: &clap::Command) -> io::Result<String> {
 
 /// A section of words and what they mean.
 fn definitions(title: &str, rows: &[(&str, &str)]) -> String {
-    let rows: String = rows
-        .iter()
-        .map(|(word, meaning)| format!(".TP\n\\fB{}\\fR\n{}\n", escaped(word), escaped(meaning)))
-        .collect();
-    format!(".SH \"{title}\"\n{rows}")
+    let mut section = format!(".SH \"{title}\"\n");
+    for (word, meaning) in rows {
+        section.push_str(".TP\n\\fB");
+        section.push_str(&escaped(word));
+        section.push_str("\\fR\n");
+        section.push_str(&escaped(meaning));
+        section.push('\n');
+    }
+    section
 }
 
 /// Text that roff takes as it is.

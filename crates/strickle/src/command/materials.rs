@@ -24,7 +24,7 @@ pub(super) fn run(arguments: &Materials, terminal: &mut Terminal) -> Result<Stat
 
 /// The list for people, one line a material.
 fn listed(found: &[&Material]) -> String {
-    found
+    let lines: Vec<String> = found
         .iter()
         .map(|material| {
             let range = material
@@ -33,13 +33,14 @@ fn listed(found: &[&Material]) -> String {
                     format!("{least} to {greatest}")
                 });
             format!(
-                "{:<20} {:>7}  {range:<14} {}\n",
+                "{:<20} {:>7}  {range:<14} {}",
                 material.name,
                 material.density,
                 material.words.first().map_or("", String::as_str)
             )
         })
-        .collect()
+        .collect();
+    lines.join("\n") + "\n"
 }
 
 /// The list for machines.

@@ -14,24 +14,30 @@
 mod arc;
 mod bezier;
 mod bounds;
+mod corner;
 mod edge;
 mod ellipse;
+mod intersect;
 mod line;
 mod outline;
 mod parallel;
 mod region;
 pub mod trig;
+mod wall;
 
 pub use arc::Arc;
 pub use bezier::Bezier;
 pub use bounds::Bounds;
+pub use corner::{CornerFault, Treated, chamfer_corner, round_corner};
 pub use edge::Edge;
 pub use ellipse::EllipseArc;
 pub use glam::DVec2;
+pub use intersect::{Meeting, meetings, self_meetings};
 pub use line::Line;
 pub use outline::{Loop, OpenLoop};
 pub use parallel::{Base, Parallel};
 pub use region::Region;
+pub use wall::{Grow, WallFault, wall};
 
 /// The vector turned a quarter to the left: the left-hand normal of a direction of travel.
 pub fn left_of(direction: DVec2) -> DVec2 {

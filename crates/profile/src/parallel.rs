@@ -69,6 +69,15 @@ impl Parallel {
         base.derivative(t) * (1.0 - self.distance * base.curvature(t))
     }
 
+    /// Least of 1 - distance * curvature along the base, and the parameter where. Positive where the curve is legal.
+    pub fn least_speed_ratio(&self) -> (f64, f64) {
+        let base = self.base.edge();
+        (0..=64)
+            .map(|i| f64::from(i) / 64.0)
+            .map(|t| (1.0 - self.distance * base.curvature(t), t))
+            .fold((f64::INFINITY, 0.0), |a, b| if b.0 < a.0 { b } else { a })
+    }
+
     /// The part from `t0` to `t1`, t0 < t1.
     #[must_use]
     pub fn part(self, t0: f64, t1: f64) -> Self {

@@ -35,32 +35,61 @@ fn compare(what: &str, found: &Exact, book: &Handbook) {
     near("volume", found.volume, book.volume, book.volume);
     near("surface", found.surface, book.surface, book.surface);
     near("mass", found.mass, mass, mass);
-    let extent = found.length.max(found.largest_diameter).max(book.centre_z.abs());
+    let extent = found
+        .length
+        .max(found.largest_diameter)
+        .max(book.centre_z.abs());
     for (axis, wanted) in [0.0, 0.0, book.centre_z].into_iter().enumerate() {
         near("centre", found.centre[axis], wanted, extent);
     }
     // Steiner: the entries about the origin hold m z^2 more across the axis.
     let steiner = book.centre_z * book.centre_z;
-    let about = |extra: f64| [book.across_per_mass + extra, book.across_per_mass + extra, book.axial_per_mass];
+    let about = |extra: f64| {
+        [
+            book.across_per_mass + extra,
+            book.across_per_mass + extra,
+            book.axial_per_mass,
+        ]
+    };
     for (name, matrix, diagonal) in [
-        ("inertia about the centre", &found.inertia_about_centre, about(0.0)),
-        ("inertia about the origin", &found.inertia_about_origin, about(steiner)),
+        (
+            "inertia about the centre",
+            &found.inertia_about_centre,
+            about(0.0),
+        ),
+        (
+            "inertia about the origin",
+            &found.inertia_about_origin,
+            about(steiner),
+        ),
     ] {
         let scale = mass * (steiner + book.axial_per_mass + book.across_per_mass);
-        for row in 0..3 {
-            for column in 0..3 {
-                let wanted = if row == column { mass * diagonal[row] } else { 0.0 };
-                near(name, matrix[row][column], wanted, scale);
+        for (row, entries) in matrix.iter().enumerate() {
+            for (column, &entry) in entries.iter().enumerate() {
+                let wanted = if row == column {
+                    mass * diagonal[row]
+                } else {
+                    0.0
+                };
+                near(name, entry, wanted, scale);
             }
         }
     }
-    near("axial inertia", found.inertia_about_axis, mass * book.axial_per_mass, mass * book.axial_per_mass);
+    near(
+        "axial inertia",
+        found.inertia_about_axis,
+        mass * book.axial_per_mass,
+        mass * book.axial_per_mass,
+    );
 }
 
 #[test]
 fn solid_cylinder() {
     for (r, h, z) in [(0.03_f64, 0.08_f64, 0.5_f64), (2.0, 0.01, -3.0)] {
-        let section = format!("outline = [{{ r = 0, z = {z} }}, {{ r = {r} }}, {{ z = {} }}, {{ r = 0 }}]", z + h);
+        let section = format!(
+            "outline = [{{ r = 0, z = {z} }}, {{ r = {r} }}, {{ z = {} }}, {{ r = 0 }}]",
+            z + h
+        );
         // The printed bounds are decimal; the handbook takes the height that they leave.
         let h = (z + h) - z;
         let book = Handbook {
@@ -82,10 +111,14 @@ fn hollow_cylinder() {
         volume: PI * (b * b - a * a) * h,
         surface: 2.0 * PI * ((a + b) * h + b * b - a * a),
         centre_z: h / 2.0,
-        axial_per_mass: (a * a + b * b) / 2.0,
+        axial_per_mass: 0.5 * (a * a + b * b),
         across_per_mass: (3.0 * (a * a + b * b) + h * h) / 12.0,
     };
-    compare("hollow cylinder", &exact(&ring("m", DENSITY, inside, outside, h)), &book);
+    compare(
+        "hollow cylinder",
+        &exact(&ring("m", DENSITY, inside, outside, h)),
+        &book,
+    );
 }
 
 #[test]
@@ -124,7 +157,8 @@ fn frustum() {
         - about_own_centre(inner, small, cut, h + cut / 4.0);
     let book = Handbook {
         volume,
-        surface: PI * (big * big + small * small + (big + small) * (h * h + power(big - small, 2)).sqrt()),
+        surface: PI
+            * (big * big + small * small + (big + small) * (h * h + power(big - small, 2)).sqrt()),
         centre_z,
         axial_per_mass: 0.3 * (power(big, 5) - power(small, 5)) / (power(big, 3) - power(small, 3)),
         across_per_mass: across / volume,
@@ -151,7 +185,11 @@ fn whole_sphere() {
         axial_per_mass: 0.4 * r * r,
         across_per_mass: 0.4 * r * r,
     };
-    compare("sphere", &exact(&one_body("m", DENSITY, &sphere(r, z))), &book);
+    compare(
+        "sphere",
+        &exact(&one_body("m", DENSITY, &sphere(r, z))),
+        &book,
+    );
 }
 
 #[test]
@@ -167,7 +205,11 @@ fn hemisphere() {
         axial_per_mass: 0.4 * r * r,
         across_per_mass: 83.0 / 320.0 * r * r,
     };
-    compare("hemisphere", &exact(&one_body("m", DENSITY, &section)), &book);
+    compare(
+        "hemisphere",
+        &exact(&one_body("m", DENSITY, &section)),
+        &book,
+    );
 }
 
 #[test]
@@ -201,7 +243,11 @@ fn paraboloid() {
         axial_per_mass: r * r / 3.0,
         across_per_mass: (3.0 * r * r + h * h) / 18.0,
     };
-    compare("paraboloid", &exact(&one_body("m", DENSITY, &section)), &book);
+    compare(
+        "paraboloid",
+        &exact(&one_body("m", DENSITY, &section)),
+        &book,
+    );
 }
 
 #[test]
@@ -258,7 +304,10 @@ fn spherical_cap_and_zone() {
     let centre_z = 0.75 * (2.0 * r - h) * (2.0 * r - h) / (3.0 * r - h) - (r - h);
     assert!((found.volume / volume - 1.0).abs() <= PROMISED);
     assert!((found.centre[2] / centre_z - 1.0).abs() <= PROMISED);
-    let named = found.surfaces.iter().find(|surface| surface.name.as_deref() == Some("zone"));
+    let named = found
+        .surfaces
+        .iter()
+        .find(|surface| surface.name.as_deref() == Some("zone"));
     assert!((named.expect("the zone has a name").area / zone - 1.0).abs() <= PROMISED);
 }
 
@@ -280,9 +329,12 @@ fn sector_of_a_ring() {
     // A cylinder of which a part turn is left: centroid of a sector 2 r sin(alpha) / (3 alpha), alpha half the angle.
     let (r, h) = (0.2_f64, 0.05_f64);
     for degrees in [30.0_f64, 90.0, 180.0, 270.0, 359.0] {
-        let section = format!("outline = [{{ r = 0, z = 0 }}, {{ r = {r} }}, {{ z = {h} }}, {{ r = 0 }}]");
-        let text = one_body("m", DENSITY, &section)
-            .replace("unit = \"m\"", &format!("unit = \"m\"\nrevolve = {degrees}"));
+        let section =
+            format!("outline = [{{ r = 0, z = 0 }}, {{ r = {r} }}, {{ z = {h} }}, {{ r = 0 }}]");
+        let text = one_body("m", DENSITY, &section).replace(
+            "unit = \"m\"",
+            &format!("unit = \"m\"\nrevolve = {degrees}"),
+        );
         let found = exact(&text);
         let half = degrees.to_radians() / 2.0;
         let volume = half * r * r * h;
@@ -293,7 +345,10 @@ fn sector_of_a_ring() {
         let (sine, cosine) = profile::trig::sin_cos(half);
         let centre = [distance * cosine, distance * sine, h / 2.0];
         for (found, wanted) in found.centre.into_iter().zip(centre) {
-            assert!((found - wanted).abs() <= PROMISED * r, "{degrees}: {found} {wanted}");
+            assert!(
+                (found - wanted).abs() <= PROMISED * r,
+                "{degrees}: {found} {wanted}"
+            );
         }
         // About the origin: integrals of x^2, y^2 and x y over the sector, by parts of r^4/4.
         let mass = DENSITY * volume;
@@ -311,8 +366,16 @@ fn sector_of_a_ring() {
             [-xy, xx + zz, -yz],
             [-xz, -yz, xx + yy],
         ];
-        for (found, wanted) in found.inertia_about_origin.into_iter().flatten().zip(wanted.into_iter().flatten()) {
-            assert!((found - wanted).abs() <= PROMISED * mass * r * r, "{degrees}: {found} {wanted}");
+        for (found, wanted) in found
+            .inertia_about_origin
+            .into_iter()
+            .flatten()
+            .zip(wanted.into_iter().flatten())
+        {
+            assert!(
+                (found - wanted).abs() <= PROMISED * mass * r * r,
+                "{degrees}: {found} {wanted}"
+            );
         }
     }
 }

@@ -35,11 +35,21 @@ fn tabulated(crown: f64, knuckle: f64) -> (f64, f64) {
 
 #[test]
 fn torispherical_heads_hold_what_the_tables_formula_gives() {
-    for (crown, knuckle) in [(1.0, 0.1), (1.0, 0.06), (0.8, 0.154), (0.9, 0.17), (1.2, 0.02)] {
+    for (crown, knuckle) in [
+        (1.0, 0.1),
+        (1.0, 0.06),
+        (0.8, 0.154),
+        (0.9, 0.17),
+        (1.2, 0.02),
+    ] {
         let found = torispherical(crown, knuckle);
         let (depth, volume) = tabulated(crown, knuckle);
         // The promised 1e-13; the table's formula subtracts terms up to twenty times its result, and keeps no more.
-        assert!((found.length / depth - 1.0).abs() < 1e-13, "{crown} {knuckle}: {} {depth}", found.length);
+        assert!(
+            (found.length / depth - 1.0).abs() < 1e-13,
+            "{crown} {knuckle}: {} {depth}",
+            found.length
+        );
         let cancelled = 20.0 * 8.0 * f64::EPSILON;
         assert!(
             (found.volume / volume - 1.0).abs() < 1e-13 + cancelled,
@@ -60,15 +70,31 @@ fn torispherical_heads_come_near_the_trades_factors() {
     ];
     for (crown, knuckle, depth, volume) in rows {
         let found = torispherical(crown, knuckle);
-        assert!(Printed::of(depth).admits(found.length, 0.0), "{} printed {depth}", found.length);
+        assert!(
+            Printed::of(depth).admits(found.length, 0.0),
+            "{} printed {depth}",
+            found.length
+        );
         if let Some(volume) = volume {
-            assert!(Printed::of(volume).admits(found.volume, 0.0), "{} printed {volume}", found.volume);
+            assert!(
+                Printed::of(volume).admits(found.volume, 0.0),
+                "{} printed {volume}",
+                found.volume
+            );
         }
     }
     // DIN 28013: 0.255 D and 0.1298 D^3 (from memory) are for the outside diameter of a common plate; inside, within 1 %.
     let found = torispherical(0.8, 0.154);
-    assert!((found.length / 0.255 - 1.0).abs() < 0.01, "{}", found.length);
-    assert!((found.volume / 0.1298 - 1.0).abs() < 0.01, "{}", found.volume);
+    assert!(
+        (found.length / 0.255 - 1.0).abs() < 0.01,
+        "{}",
+        found.length
+    );
+    assert!(
+        (found.volume / 0.1298 - 1.0).abs() < 0.01,
+        "{}",
+        found.volume
+    );
 }
 
 #[test]
@@ -82,7 +108,11 @@ fn semi_ellipsoidal_head_two_to_one() {
     assert!((found.volume / (PI / 24.0) - 1.0).abs() < 1e-13);
     let shell = &found.surfaces[0];
     assert_eq!(shell.name.as_deref(), Some("shell"));
-    assert!(Printed::of("1.084").admits(shell.area, 0.0), "{}", shell.area);
+    assert!(
+        Printed::of("1.084").admits(shell.area, 0.0),
+        "{}",
+        shell.area
+    );
 }
 
 #[test]
@@ -94,5 +124,9 @@ fn hemispherical_head() {
         "outline = [{ r = 0, z = 0 }, { r = 0.5, z = 0.5, centre = { r = 0, z = 0.5 }, name = \"shell\" }, { r = 0 }]",
     ));
     assert!((found.volume / (PI / 12.0) - 1.0).abs() < 1e-13);
-    assert!(Printed::of("1.571").admits(found.surfaces[0].area, 0.0), "{}", found.surfaces[0].area);
+    assert!(
+        Printed::of("1.571").admits(found.surfaces[0].area, 0.0),
+        "{}",
+        found.surfaces[0].area
+    );
 }

@@ -28,6 +28,9 @@ fn grs_80() {
         ("R3", same_volume, "6371000.7900"),
         ("meridian quadrant", quadrant, "10001965.7292"),
     ] {
-        assert!(Printed::of(printed).admits(found, 0.0), "{what}: {found} m, printed {printed} m");
+        assert!(
+            Printed::of(printed).admits(found, 0.0),
+            "{what}: {found} m, printed {printed} m"
+        );
     }
 }

@@ -28,6 +28,9 @@ fn a_metre_of_tube_weighs_what_the_standard_prints() {
         );
         // The standard's own formula; its factor, pi 7850e-6, is printed to six digits.
         let formula = (outside - wall) * wall * 0.024_661_5;
-        assert!((found / formula - 1.0).abs() < 0.5e-7 / 0.0246, "{outside} x {wall}: {found} {formula}");
+        assert!(
+            (found / formula - 1.0).abs() < 0.5e-7 / 0.0246,
+            "{outside} x {wall}: {found} {formula}"
+        );
     }
 }

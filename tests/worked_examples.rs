@@ -105,8 +105,16 @@ fn hopper() {
         "outline = [{ r = 0, z = 0 }, { r = 15 }, { z = 18 }, { r = 30, z = 38 }, { r = 0 }]",
     ));
     let inch = FOOT / 12.0;
-    assert_printed("surface over pi, in2", "2790", found.surface / (PI * inch * inch));
-    assert_printed("volume over pi, in3", "14550", found.volume / (PI * inch * inch * inch));
+    assert_printed(
+        "surface over pi, in2",
+        "2790",
+        found.surface / (PI * inch * inch),
+    );
+    assert_printed(
+        "volume over pi, in3",
+        "14550",
+        found.volume / (PI * inch * inch * inch),
+    );
 }
 
 #[test]
@@ -160,7 +168,11 @@ fn blank_of_a_drawn_cup() {
 fn modulus_of_castings() {
     // Foundry texts (seen): the modulus V/A of a sphere is d/6, of a cylinder as high as wide d/6, too.
     let cylinder = exact(&ring("cm", 7200.0, 0.0, 12.0, 12.0));
-    assert_printed("cylinder, cm", "2", cylinder.volume / cylinder.surface * 100.0);
+    assert_printed(
+        "cylinder, cm",
+        "2",
+        cylinder.volume / cylinder.surface * 100.0,
+    );
     let sphere = exact(&one_body(
         "cm",
         7200.0,

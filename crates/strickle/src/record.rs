@@ -4,6 +4,7 @@
 //! starts in the half-plane y = 0, x >= 0 and turns right-handed about +z. `None` is `null`: it does not apply. Keys
 //! keep their names and order for good; new ones are added behind the old.
 
+use crate::figures::Kind;
 use serde::Serialize;
 
 /// A point or vector in space.
@@ -294,4 +295,9 @@ pub struct Judgement {
     pub difference: f64,
     /// True where the difference lies within the deviation.
     pub holds: bool,
+    /// What it is, for people.
+    #[serde(skip)]
+    pub kind: Kind,
+    /// What is wanted, as written.
+    pub written: String,
 }

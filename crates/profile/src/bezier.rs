@@ -66,18 +66,23 @@ impl Bezier {
 
     /// The least box that holds it, exact up to rounding.
     pub fn bounds(self) -> Bounds {
+        let [a, _, _, d] = self.points;
+        self.turnings()
+            .map(|t| self.point(t))
+            .fold(Bounds::of_corners(a, d), Bounds::with)
+    }
+
+    /// The parameters strictly between the ends at which it runs along r or along z.
+    pub(crate) fn turnings(self) -> impl Iterator<Item = f64> {
         let [a, b, c, d] = self.points;
-        let mut bounds = Bounds::of_corners(a, d);
-        for axis in 0..2 {
-            // The derivative's coefficients in 1, t, t2 along this axis, divided by 3.
-            let (p0, p1, p2) = (b[axis] - a[axis], c[axis] - b[axis], d[axis] - c[axis]);
-            for t in quadratic_roots(p0 - 2.0 * p1 + p2, 2.0 * (p1 - p0), p0) {
-                if t > 0.0 && t < 1.0 {
-                    bounds = bounds.with(self.point(t));
-                }
-            }
-        }
-        bounds
+        [0, 1]
+            .into_iter()
+            .flat_map(move |axis| {
+                // The derivative's coefficients in 1, t, t2 along this axis, divided by 3.
+                let (p0, p1, p2) = (b[axis] - a[axis], c[axis] - b[axis], d[axis] - c[axis]);
+                quadratic_roots(p0 - 2.0 * p1 + p2, 2.0 * (p1 - p0), p0)
+            })
+            .filter(|t| *t > 0.0 && *t < 1.0)
     }
 }
 

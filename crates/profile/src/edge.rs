@@ -200,7 +200,7 @@ impl Edge {
         })
     }
 
-    /// A box that holds it: the least one up to rounding, save that a [`Parallel`]'s is its base's, grown.
+    /// The least box that holds it, exact up to rounding.
     pub fn bounds(&self) -> Bounds {
         match self {
             Self::Line(line) => line.bounds(),

@@ -2,6 +2,7 @@
 
 use crate::{Bounds, trig};
 use glam::DVec2;
+use std::f64::consts::PI;
 
 /// An elliptic arc: centre + cos(u) `axis_a` + sin(u) `axis_b` for the eccentric angle u from `from` to `from + sweep`.
 ///
@@ -89,20 +90,23 @@ impl EllipseArc {
 
     /// The least box that holds it, exact up to rounding.
     pub fn bounds(self) -> Bounds {
-        let mut bounds = Bounds::of_corners(self.start, self.end);
+        self.turnings()
+            .map(|t| self.point(t))
+            .fold(Bounds::of_corners(self.start, self.end), Bounds::with)
+    }
+
+    /// The parameters strictly between the ends at which it runs along r or along z.
+    pub(crate) fn turnings(self) -> impl Iterator<Item = f64> {
         // r is extreme where -a_r sin u + b_r cos u = 0, likewise z; each twice a turn.
-        for (a, b) in [
+        [
             (self.axis_a.x, self.axis_b.x),
             (self.axis_a.y, self.axis_b.y),
-        ] {
+        ]
+        .into_iter()
+        .flat_map(move |(a, b)| {
             let extreme = trig::atan2(b, a);
-            for k in -3_i32..=3 {
-                let t = (extreme + f64::from(k) * std::f64::consts::PI - self.from) / self.sweep;
-                if t > 0.0 && t < 1.0 {
-                    bounds = bounds.with(self.point(t));
-                }
-            }
-        }
-        bounds
+            (-3_i32..=3).map(move |k| (extreme + f64::from(k) * PI - self.from) / self.sweep)
+        })
+        .filter(|t| *t > 0.0 && *t < 1.0)
     }
 }

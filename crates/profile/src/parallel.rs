@@ -92,13 +92,54 @@ impl Parallel {
         }
     }
 
-    /// A box that holds it: the base's, grown by the distance.
+    /// The least box that holds it, exact up to rounding: it runs along r or z where its base does.
     pub fn bounds(self) -> Bounds {
-        self.base
-            .edge()
-            .bounds()
-            .grown(self.distance.abs())
-            .with(self.start)
-            .with(self.end)
+        let ends = Bounds::of_corners(self.start, self.end);
+        let with = |bounds: Bounds, t| bounds.with(self.point(t));
+        match self.base {
+            Base::Ellipse(ellipse) => ellipse.turnings().fold(ends, with),
+            Base::Bezier(bezier) => bezier.turnings().fold(ends, with),
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn the_box_is_touched_on_every_side_and_left_on_none() {
+        let arch = Bezier {
+            points: [
+                DVec2::new(1.0, 0.0),
+                DVec2::new(1.2, 0.9),
+                DVec2::new(2.3, 1.1),
+                DVec2::new(2.0, -0.2),
+            ],
+        };
+        let ellipse = EllipseArc {
+            start: DVec2::new(3.0, 1.0),
+            end: DVec2::new(1.0, 1.0),
+            axis_a: DVec2::new(1.0, 0.0),
+            axis_b: DVec2::new(0.0, 0.5),
+            from: 0.0,
+            sweep: std::f64::consts::PI,
+        };
+        for base in [Base::Bezier(arch), Base::Ellipse(ellipse)] {
+            for distance in [-0.1, 0.05] {
+                let beside = Parallel::new(base, distance);
+                let bounds = beside.bounds();
+                let sampled = (0..=10_000)
+                    .map(|i| beside.point(f64::from(i) / 1e4))
+                    .map(Bounds::of_point)
+                    .reduce(Bounds::union)
+                    .unwrap();
+                // Between samples the curve rises at most by its curvature times the step squared: far below 1e-6.
+                let (low, high) = (sampled.min - bounds.min, bounds.max - sampled.max);
+                for gap in [low.x, low.y, high.x, high.y] {
+                    assert!((-1e-15..1e-6).contains(&gap), "{gap} {distance}");
+                }
+            }
+        }
     }
 }

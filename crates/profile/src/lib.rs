@@ -12,17 +12,22 @@
 //! Every edge has a parameter t from 0 at its start to 1 at its end.
 
 mod arc;
+mod area;
 mod bezier;
 mod bounds;
 mod corner;
 mod edge;
 mod ellipse;
+mod index;
 mod intersect;
 mod line;
+mod nearest;
 mod outline;
+mod overlap;
 mod parallel;
 mod region;
 pub mod trig;
+mod validity;
 mod wall;
 
 pub use arc::Arc;
@@ -32,11 +37,14 @@ pub use corner::{CornerFault, Treated, chamfer_corner, round_corner};
 pub use edge::Edge;
 pub use ellipse::EllipseArc;
 pub use glam::DVec2;
+pub use index::{Nearest, Place, RegionIndex};
 pub use intersect::{Meeting, meetings, self_meetings};
 pub use line::Line;
 pub use outline::{Loop, OpenLoop};
+pub use overlap::{BodyOverlap, overlaps};
 pub use parallel::{Base, Parallel};
 pub use region::Region;
+pub use validity::{EdgeRef, LARGEST, RegionFault, SMALLEST};
 pub use wall::{Grow, WallFault, wall};
 
 /// The vector turned a quarter to the left: the left-hand normal of a direction of travel.

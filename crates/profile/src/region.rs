@@ -1,6 +1,6 @@
 //! The section of one body: a loop less the loops inside it.
 
-use crate::{Bounds, Edge, Loop};
+use crate::{Bounds, Edge, Loop, RegionFault};
 
 /// The section of one body: the area inside the outer loop less the voids.
 ///
@@ -13,6 +13,24 @@ pub struct Region {
 }
 
 impl Region {
+    /// Checks and orients: loops that run the wrong way are reversed, and the tags stay with their edges.
+    ///
+    /// # Errors
+    /// Every fault found, in order of place; of a loop with very many, the first ones.
+    pub fn new(outer: Loop, voids: Vec<Loop>) -> Result<Self, Vec<RegionFault>> {
+        let oriented = |outline: Loop, sign: f64| {
+            if outline.signed_area() * sign < 0.0 {
+                outline.reversed()
+            } else {
+                outline
+            }
+        };
+        Ok(Self {
+            outer: oriented(outer, 1.0),
+            voids: voids.into_iter().map(|void| oriented(void, -1.0)).collect(),
+        })
+    }
+
     /// The outer loop, counter-clockwise.
     pub fn outer(&self) -> &Loop {
         &self.outer

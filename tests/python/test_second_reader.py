@@ -1,0 +1,57 @@
+"""The examples' exact figures against a second reading of the same files by other means."""
+
+import json
+import os
+import subprocess
+import tomllib
+from pathlib import Path
+
+import numpy as np
+import pytest
+
+import second_reader
+
+TOP = Path(__file__).parents[2]
+EXAMPLES = sorted((TOP / "examples").glob("*.toml"))
+STRICKLE = os.environ["STRICKLE"]
+
+# The second reading differentiates curves beside curves by finite differences, which leaves about 1e-11.
+AGREE = 1e-10
+
+
+@pytest.fixture(scope="module")
+def density_of():
+    table = tomllib.loads((TOP / "assets/materials.toml").read_text(encoding="utf-8"))
+    densities = {material["name"]: material["density"] for material in table["material"]}
+    return densities.__getitem__
+
+
+def weighed(path):
+    done = subprocess.run(
+        [STRICKLE, "weigh", "--json", str(path)], capture_output=True, text=True, timeout=60
+    )
+    assert done.returncode == 0, done.stderr
+    return json.loads(done.stdout)["exact"]
+
+
+@pytest.mark.parametrize("path", EXAMPLES, ids=lambda path: path.stem)
+def test_both_readings_agree(path, density_of):
+    exact = weighed(path)
+    second = second_reader.figures(path, density_of)
+    section = exact["section"]
+    for found, wanted in [
+        (exact["volume"], second["volume"]),
+        (exact["surface"], second["surface"]),
+        (exact["mass"], second["mass"]),
+        (section["area"], second["area"]),
+        (section["perimeter"], second["perimeter"]),
+    ]:
+        assert found == pytest.approx(wanted, rel=AGREE, abs=0)
+    extent = max(map(abs, exact["bounds"]["min"] + exact["bounds"]["max"]))
+    np.testing.assert_allclose(exact["centre"], second["centre"], rtol=0, atol=AGREE * extent)
+    np.testing.assert_allclose(
+        exact["inertia_about_origin"],
+        second["inertia_about_origin"],
+        rtol=0,
+        atol=AGREE * exact["mass"] * extent**2,
+    )

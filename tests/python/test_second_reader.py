@@ -55,3 +55,21 @@ def test_both_readings_agree(path, density_of):
         rtol=0,
         atol=AGREE * exact["mass"] * extent**2,
     )
+
+
+def test_the_second_reading_knows_a_torus(tmp_path):
+    path = tmp_path / "torus.toml"
+    path.write_text(
+        'format = 1\n[part]\nname = "torus"\nunit = "cm"\n[[body]]\nname = "ring"\ndensity = "2000 kg/m3"\n'
+        "outline = { circle = { r = 50, z = 10 }, radius = 12 }\n",
+        encoding="utf-8",
+    )
+    second = second_reader.figures(path, {}.__getitem__)
+    volume = 2 * np.pi**2 * 0.5 * 0.12**2
+    assert second["volume"] == pytest.approx(volume, rel=1e-13)
+    assert second["surface"] == pytest.approx(4 * np.pi**2 * 0.5 * 0.12, rel=1e-13)
+    axial = 2000 * volume * (0.5**2 + 0.75 * 0.12**2)
+    across = 2000 * volume * (0.5**2 / 2 + 0.625 * 0.12**2 + 0.1**2)
+    np.testing.assert_allclose(
+        second["inertia_about_origin"], np.diag([across, across, axial]), rtol=1e-12, atol=1e-12 * axial
+    )

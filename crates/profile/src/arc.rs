@@ -4,6 +4,10 @@ use crate::{Bounds, left_of, trig};
 use glam::DVec2;
 use std::f64::consts::PI;
 
+/// An angle this close to half a turn is one: the rounding of a centre's coordinates, on circles down to 1e-3 of the
+/// part, may turn it to either side.
+const HALF_TURN_ROUNDING: f64 = 1e-12;
+
 /// A circular arc of at most half a turn, given by its ends and the angle it turns through.
 ///
 /// Ends and angle determine radius and centre with full precision, however flat the arc is: with a centre a million
@@ -19,11 +23,11 @@ pub struct Arc {
 }
 
 impl Arc {
-    /// Arc from `start` to `end` about `centre`, through the smaller angle (through pi where they are opposite:
-    /// counter-clockwise where `counter_clockwise`). The centre is used for the angle only.
+    /// Arc from `start` to `end` about `centre`, through the smaller angle (through pi where they are opposite, to
+    /// rounding: counter-clockwise where `counter_clockwise`). The centre is used for the angle only.
     pub fn about(start: DVec2, end: DVec2, centre: DVec2, counter_clockwise: bool) -> Self {
         let sweep = trig::angle_between(start - centre, end - centre);
-        let half_turn = sweep.abs() == PI;
+        let half_turn = PI - sweep.abs() <= HALF_TURN_ROUNDING;
         Self {
             start,
             end,
@@ -107,15 +111,25 @@ impl Arc {
         })
     }
 
-    /// Parameter of the point of the circle in the direction `angle` from the centre, if the arc passes it.
-    pub(crate) fn parameter_towards(self, direction: DVec2) -> Option<f64> {
-        let outward = if self.sweep > 0.0 { -1.0 } else { 1.0 };
-        let first = left_of(self.start_direction()) * outward;
-        let mut turn = trig::angle_between(first, direction);
-        if turn * self.sweep < 0.0 {
-            turn += 2.0 * PI * self.sweep.signum();
-        }
-        let t = turn / self.sweep;
+    /// Parameter of the point of the whole circle nearest to `point`: 0 at the start, 1 at the end, beyond them outside
+    /// [0, 1], up to half a turn from the middle. No digits are lost on a flat arc.
+    pub(crate) fn parameter_of(self, point: DVec2) -> f64 {
+        // Seen from the centre and measured from the arc's middle. All is multiplied by 2 sin(sweep/2) / chord^2, so that
+        // the centre of a flat arc does not run away.
+        let chord = self.chord();
+        let (s, c) = trig::sin_cos(0.5 * self.sweep);
+        let from_middle = (point - self.start - 0.5 * chord) / chord.length_squared();
+        let along = 2.0 * s * from_middle.dot(chord);
+        let outward = c - 2.0 * s * chord.perp_dot(from_middle);
+        0.5 + trig::atan2(along, outward) / self.sweep
+    }
+
+    /// Parameter of the circle's point in this direction from the centre, if the arc passes it.
+    fn parameter_towards(self, direction: DVec2) -> Option<f64> {
+        // From the centre the arc's middle lies square to the chord. Measured from there, an arc of at most half a turn
+        // is never more than a quarter turn away: no angle has to be wrapped.
+        let to_middle = -left_of(self.chord()) * self.sweep.signum();
+        let t = 0.5 + trig::angle_between(to_middle, direction) / self.sweep;
         (0.0..=1.0).contains(&t).then_some(t)
     }
 

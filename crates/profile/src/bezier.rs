@@ -1,6 +1,7 @@
 //! Cubic Bezier edges; a parabola is a cubic whose control points were raised from three to four.
 
 use crate::Bounds;
+use crate::polynomial::sign_changes;
 use glam::DVec2;
 
 /// A cubic Bezier.
@@ -49,6 +50,56 @@ impl Bezier {
     pub fn second_derivative(self, t: f64) -> DVec2 {
         let [a, b, c, d] = self.points;
         6.0 * ((1.0 - t) * (a - 2.0 * b + c) + t * (b - 2.0 * c + d))
+    }
+
+    /// Third derivative with respect to `t`: a constant.
+    pub(crate) fn third_derivative(self) -> DVec2 {
+        let [a, b, c, d] = self.points;
+        6.0 * ((d - a) - 3.0 * (c - b))
+    }
+
+    /// The longest of the three legs of the control polygon.
+    pub(crate) fn longest_leg(self) -> f64 {
+        let [a, b, c, d] = self.points;
+        (b - a).length().max((c - b).length()).max((d - c).length())
+    }
+
+    /// Parameters in (0, 1), ascending, between which its curvature keeps its sign and is monotone: inflections, extremes
+    /// of curvature, cusps.
+    pub(crate) fn knots(self) -> Vec<f64> {
+        let (c1, c2, c3) = (
+            self.derivative(0.0),
+            self.second_derivative(0.0),
+            self.third_derivative(),
+        );
+        // B' = c1 + c2 t + c3 t^2 / 2. The curvature is w / v^(3/2) with w = B' x B'', v = B'.B'.
+        let w = [c1.perp_dot(c2), c1.perp_dot(c3), 0.5 * c2.perp_dot(c3)];
+        let v = [
+            c1.dot(c1),
+            2.0 * c1.dot(c2),
+            c2.dot(c2) + c1.dot(c3),
+            c2.dot(c3),
+            0.25 * c3.dot(c3),
+        ];
+        // It is extreme where w' v - 3/2 w v' = 0.
+        let mut extreme = [0.0; 6];
+        for (i, v) in v.iter().enumerate() {
+            extreme[i] += w[1] * v;
+            extreme[i + 1] += 2.0 * w[2] * v;
+        }
+        for (i, w) in w.iter().enumerate() {
+            for (k, v) in v.iter().enumerate().skip(1) {
+                extreme[i + k - 1] -= 1.5 * w * (k as f64) * v;
+            }
+        }
+        let mut knots = sign_changes(&extreme, 0.0, 1.0);
+        knots.extend(sign_changes(&w, 0.0, 1.0));
+        // A cusp, or on a straight Bezier the point where it turns back, is where the speed is least.
+        let slowest = [v[1], 2.0 * v[2], 3.0 * v[3], 4.0 * v[4]];
+        knots.extend(sign_changes(&slowest, 0.0, 1.0));
+        knots.sort_by(f64::total_cmp);
+        knots.dedup();
+        knots
     }
 
     /// The part from `t0` to `t1`, t0 < t1.

@@ -109,4 +109,24 @@ impl EllipseArc {
         })
         .filter(|t| *t > 0.0 && *t < 1.0)
     }
+
+    /// Parameters in (0, 1), ascending, whose eccentric angle is `angle` plus a multiple of `period`, which is
+    /// at least a quarter turn.
+    pub(crate) fn parameters_of(self, angle: f64, period: f64) -> Vec<f64> {
+        let (low, high) = if self.sweep > 0.0 {
+            (self.from, self.from + self.sweep)
+        } else {
+            (self.from + self.sweep, self.from)
+        };
+        let first = angle + ((low - angle) / period).ceil() * period;
+        // At most half a turn is swept, and no period is shorter than a quarter: three of them at most.
+        let mut parameters: Vec<f64> = (0..3)
+            .map(|k| first + f64::from(k) * period)
+            .filter(|at| *at < high)
+            .map(|at| (at - self.from) / self.sweep)
+            .filter(|t| *t > 0.0 && *t < 1.0)
+            .collect();
+        parameters.sort_by(f64::total_cmp);
+        parameters
+    }
 }

@@ -69,15 +69,6 @@ impl Parallel {
         base.derivative(t) * (1.0 - self.distance * base.curvature(t))
     }
 
-    /// Least of 1 - distance * curvature along the base, and the parameter where. Positive where the curve is legal.
-    pub fn least_speed_ratio(&self) -> (f64, f64) {
-        let base = self.base.edge();
-        (0..=64)
-            .map(|i| f64::from(i) / 64.0)
-            .map(|t| (1.0 - self.distance * base.curvature(t), t))
-            .fold((f64::INFINITY, 0.0), |a, b| if b.0 < a.0 { b } else { a })
-    }
-
     /// The part from `t0` to `t1`, t0 < t1.
     #[must_use]
     pub fn part(self, t0: f64, t1: f64) -> Self {
@@ -92,14 +83,16 @@ impl Parallel {
         }
     }
 
-    /// The least box that holds it, exact up to rounding: it runs along r or z where its base does.
+    /// The least box that holds it, exact up to rounding: it runs along r or z where its base does, and
+    /// where it is not legal it may turn back at a cusp.
     pub fn bounds(self) -> Bounds {
         let ends = Bounds::of_corners(self.start, self.end);
         let with = |bounds: Bounds, t| bounds.with(self.point(t));
-        match self.base {
+        let legal = match self.base {
             Base::Ellipse(ellipse) => ellipse.turnings().fold(ends, with),
             Base::Bezier(bezier) => bezier.turnings().fold(ends, with),
-        }
+        };
+        self.cusps().into_iter().fold(legal, with)
     }
 }
 

@@ -1,9 +1,25 @@
 //! Where edges meet.
+//!
+//! A line or a circle with a line, a circle or (line only) an ellipse has closed forms. For every other pair the edges are
+//! cut into spirals, and two spirals are the graphs of two functions whose difference is followed to its zeros.
 
-mod line_line;
+mod carrier;
+mod closed_form;
+mod conic;
+mod contact;
+mod graphs;
+mod own;
+mod straight;
+#[cfg(test)]
+mod tests;
 
-use crate::Edge;
+pub use own::self_meetings;
+
+use crate::{Bounds, Edge};
+use conic::Conic;
+use contact::Contacts;
 use glam::DVec2;
+use straight::Straight;
 
 /// Where two edges meet.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -29,15 +45,51 @@ pub enum Meeting {
     },
 }
 
-/// All meetings of the two closed edges, in order of t_a. Points nearer than `within` (metres) count as shared.
+/// Points are never told apart by less than this part of the coordinates: the rounding of a computed point.
+const ROUNDING: f64 = 8.0 * f64::EPSILON;
+
+/// All meetings of the two closed edges, in order of t_a. Points nearer than `within` (metres) count as shared, and so do
+/// points that differ by the rounding of their coordinates.
+///
+/// Where the edges stay within that distance of each other along a stretch there is one meeting: an overlap where the
+/// stretch goes from an end of one of them to another end, a point otherwise. A point at the edges' ends is preferred, so
+/// that edges that follow each other meet in their shared corner and there only, however smoothly they join.
+///
+/// # Accuracy
+/// A point lies on both edges within `within` and a few roundings of the coordinates. Along the edges it is as sure as the
+/// angle between them allows: rounding divided by the sine of that angle.
 pub fn meetings(a: &Edge, b: &Edge, within: f64) -> Vec<Meeting> {
-    match (a, b) {
-        (Edge::Line(a), Edge::Line(b)) => line_line::meetings(*a, *b, within),
-        _ => Vec::new(),
+    let (box_a, box_b) = (a.bounds(), b.bounds());
+    let largest = |bounds: Bounds| bounds.min.abs().max(bounds.max.abs()).max_element();
+    let within = within.max(ROUNDING * largest(box_a).max(largest(box_b)));
+    if !box_a.grown(within).meets(box_b) {
+        return Vec::new();
     }
+    let mut found = Contacts::default();
+    match (a, b) {
+        (Edge::Line(a), Edge::Line(b)) => {
+            closed_form::line_line(&Straight::from(*a), &Straight::from(*b), within, &mut found);
+        }
+        (Edge::Arc(a), Edge::Arc(b)) => {
+            closed_form::arc_arc(&Conic::from(*a), &Conic::from(*b), within, &mut found);
+        }
+        (curve, Edge::Line(line)) if let Some(conic) = conic(curve) => {
+            closed_form::conic_line(&conic, &Straight::from(*line), within, &mut found);
+        }
+        (Edge::Line(line), curve) if let Some(conic) = conic(curve) => {
+            closed_form::conic_line(&conic, &Straight::from(*line), within, &mut found);
+            found.exchange();
+        }
+        _ => graphs::contacts(a, b, within, &mut found),
+    }
+    found.into_meetings(a, b, within)
 }
 
-/// Parameters (t0 < t1) of the points that the edge passes twice: only a Bezier or a parallel curve can have one.
-pub fn self_meetings(_edge: &Edge) -> Vec<(f64, f64)> {
-    Vec::new()
+/// The edge about its middle, where it is an arc.
+fn conic(edge: &Edge) -> Option<Conic> {
+    match edge {
+        Edge::Arc(arc) => Some(Conic::from(*arc)),
+        Edge::Ellipse(ellipse) => Some(Conic::from(*ellipse)),
+        Edge::Line(_) | Edge::Bezier(_) | Edge::Parallel(_) => None,
+    }
 }

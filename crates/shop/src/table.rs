@@ -1,7 +1,7 @@
 //! The table of materials.
 
 use crate::file::{self, Placed};
-use crate::search::{folded, nearest};
+use crate::search::{folded, nearest, occurs};
 use crate::{Fault, Material};
 use std::collections::HashMap;
 
@@ -73,8 +73,8 @@ impl Table {
         nearest(word, self.materials().flat_map(names))
     }
 
-    /// The materials in whose designation, aliases or words each of `words` occurs; those first whose own designation
-    /// begins with the first of them.
+    /// The materials in whose designation, aliases or words each of `words` occurs, from the start of a word on; those
+    /// first whose own designation begins with the first of them.
     pub fn search(&self, words: &[impl AsRef<str>]) -> Vec<&Material> {
         let words: Vec<String> = words.iter().map(|word| folded(word.as_ref())).collect();
         let mut found: Vec<&Material> = self
@@ -83,7 +83,7 @@ impl Table {
                 words.iter().all(|word| {
                     names(material)
                         .chain(material.words.iter().map(String::as_str))
-                        .any(|text| folded(text).contains(word.as_str()))
+                        .any(|text| occurs(word, text))
                 })
             })
             .collect();
@@ -128,4 +128,183 @@ fn duplicates(placed: &[Placed]) -> Vec<Fault> {
         }
     }
     faults
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    fn found(table: &Table, words: &[&str]) -> Vec<String> {
+        let found = table.search(words);
+        found.iter().map(|material| material.name.clone()).collect()
+    }
+
+    /// The fault's code and the text that it points at.
+    fn told<'a>(text: &'a str, fault: &Fault) -> (&'static str, &'a str) {
+        (fault.code, &text[fault.span.clone()])
+    }
+
+    #[test]
+    fn the_built_in_table_is_whole() {
+        let table = Table::built_in();
+        assert!(table.materials().count() >= 60);
+        for material in table.materials() {
+            let name = &material.name;
+            assert!(!material.source.is_empty(), "{name}");
+            // Between a light wood and osmium.
+            assert!((100.0..22_600.0).contains(&material.density), "{name}");
+            if let Some([least, greatest]) = material.range {
+                assert!(least < greatest, "{name}");
+            }
+        }
+    }
+
+    #[test]
+    fn densities_are_those_of_the_standards_and_handbooks() {
+        let table = Table::built_in();
+        for (name, density) in [
+            ("S235JR", 7850.0),
+            ("1.4301", 7900.0),
+            ("1.4404", 8000.0),
+            ("EN-GJL-250", 7200.0),
+            ("EN AW-6082", 2700.0),
+            ("CW614N", 8470.0),
+            ("Pb99.985", 11340.0),
+            ("water", 998.2),
+        ] {
+            assert_eq!(
+                table.find(name).map(|found| found.density),
+                Some(density),
+                "{name}"
+            );
+        }
+    }
+
+    #[test]
+    fn a_designation_is_found_however_it_is_written() {
+        let table = Table::built_in();
+        for word in ["CC480K", "cc480k", "CC 480 K", "CuSn10", "cusn 10"] {
+            assert_eq!(
+                table.find(word).map(|found| found.name.as_str()),
+                Some("CC480K"),
+                "{word}"
+            );
+        }
+        assert_eq!(table.find("en aw 6082"), table.find("EN AW-6082"));
+        assert_eq!(table.find("bronze"), None);
+        assert_eq!(table.find(""), None);
+    }
+
+    #[test]
+    fn words_find_all_that_have_each_of_them() {
+        let table = Table::built_in();
+        assert_eq!(found(&table, &["bell"]), ["bell metal"]);
+        assert_eq!(found(&table, &["tin", "bronze"]), ["CC480K", "CC483K"]);
+        assert_eq!(found(&table, &["Aluminium Bronze"]), ["CC333G"]);
+        assert_eq!(found(&table, &["tin"])[0], "tin");
+        assert_eq!(found(&table, &["unobtainium"]), [""; 0]);
+        assert_eq!(found(&table, &[]).len(), table.materials().count());
+        assert_eq!(table.nearest_word("bronce"), Some("bronze"));
+    }
+
+    #[test]
+    fn a_users_file_adds_and_replaces() {
+        let table = Table::built_in()
+            .extended(
+                "[[material]]\nname = \"house bronze\"\ndensity = \"8.81 g/cm3\"\nwords = [\"bronze\"]\n\
+                 [[material]]\nname = \"oak\"\ndensity = 710\nsource = \"weighed\"\n",
+                "own file",
+            )
+            .unwrap();
+        let house = table.find("House Bronze").unwrap();
+        assert_eq!((house.density, house.source.as_str()), (8810.0, "own file"));
+        let oak = table.find("oak").unwrap();
+        assert_eq!(
+            (oak.density, oak.range, oak.source.as_str()),
+            (710.0, None, "weighed")
+        );
+        assert_eq!(found(&table, &["oak"]), ["oak"]);
+        assert!(found(&table, &["bronze"]).contains(&"house bronze".to_owned()));
+        assert_eq!(
+            table.materials().count(),
+            Table::built_in().materials().count() + 1
+        );
+    }
+
+    #[test]
+    fn an_empty_file_adds_nothing() {
+        let table = Table::built_in().extended("# none yet\n", "own").unwrap();
+        assert_eq!(
+            table.materials().count(),
+            Table::built_in().materials().count()
+        );
+    }
+
+    #[test]
+    fn faults_of_form_are_told_with_their_place() {
+        for (text, place, word) in [
+            ("[[material]]\nname = ", "", "string"),
+            ("[[material]]\nname = \"x\"\n", "[[material]]", "density"),
+            (
+                "[[material]]\nname = \"x\"\ndensity = 1\nmass = 2\n",
+                "mass",
+                "mass",
+            ),
+            ("[[materials]]\nname = \"x\"\n", "materials", "materials"),
+            (
+                "[[material]]\nname = \"x\"\ndensity = [1]\n",
+                "[1]",
+                "kg/m3",
+            ),
+        ] {
+            let faults = Table::built_in().extended(text, "own").unwrap_err();
+            assert_eq!(faults.len(), 1);
+            let (code, pointed) = told(text, &faults[0]);
+            assert_eq!(code, "materials::form");
+            assert!(pointed.contains(place), "{text}: {pointed}");
+            assert!(
+                faults[0].message.contains(word),
+                "{text}: {}",
+                faults[0].message
+            );
+        }
+    }
+
+    #[test]
+    fn all_faults_of_values_are_told_at_once() {
+        let text = "\
+            [[material]]\nname = \"a\"\ndensity = -1\n\
+            [[material]]\nname = \" \"\ndensity = \"8 lumps\"\n\
+            [[material]]\nname = \"c\"\ndensity = 5\nrange = [6, 7]\n\
+            [[material]]\nname = \"d\"\ndensity = 5\ncontraction = [2, 1, 1.5]\n";
+        let faults = Table::built_in().extended(text, "own").unwrap_err();
+        let told: Vec<_> = faults.iter().map(|fault| told(text, fault)).collect();
+        assert_eq!(
+            told,
+            [
+                ("materials::density", "-1"),
+                ("materials::name", "\" \""),
+                ("materials::density", "\"8 lumps\""),
+                ("materials::range", "[6, 7]"),
+                ("materials::contraction", "[2, 1, 1.5]"),
+            ]
+        );
+    }
+
+    #[test]
+    fn a_name_that_one_file_gives_twice_is_told() {
+        let text = "\
+            [[material]]\nname = \"House Bronze\"\ndensity = 8800\naliases = [\"hb\"]\n\
+            [[material]]\nname = \"house-bronze\"\ndensity = 8810\n\
+            [[material]]\nname = \"x\"\ndensity = 1\naliases = [\"HB\"]\n";
+        let faults = Table::built_in().extended(text, "own").unwrap_err();
+        let told: Vec<_> = faults.iter().map(|fault| told(text, fault)).collect();
+        assert_eq!(
+            told,
+            [
+                ("materials::duplicate", "\"house-bronze\""),
+                ("materials::duplicate", "\"HB\""),
+            ]
+        );
+    }
 }

@@ -3,8 +3,10 @@
 //! A [`Study`] takes a part that has been read and finds everything out about it; what it found is a [`Record`], which is
 //! also the machine output. The command line and the window only show it. The library does no input or output.
 
+mod chords;
 mod expect;
 pub mod figures;
+mod figures_of;
 mod material;
 pub mod record;
 mod study;

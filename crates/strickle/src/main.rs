@@ -3,9 +3,11 @@
 mod arguments;
 mod command;
 mod failure;
+mod grid;
 mod input;
 mod shelf;
 mod status;
+mod style;
 mod terminal;
 
 use arguments::Arguments;

@@ -176,7 +176,7 @@ pub struct Implied {
     pub area: f64,
     /// Swept surface over perimeter and angle: the boundary's centroid's distance from the axis, m.
     pub perimeter: f64,
-    /// The larger relative difference from the section's own centroids.
+    /// The larger relative difference from the centroids found by chords through points of the edges.
     pub difference: f64,
 }
 

@@ -1,8 +1,8 @@
 //! Part in, everything out.
 
-use crate::VERSION;
 use crate::material::{self, BodyMaterial};
-use crate::record::{self, Record};
+use crate::record::{self, Exact, Record};
+use crate::{VERSION, expect, figures_of};
 use part::{Faults, Neighbours, Part, Setting};
 use sha2::{Digest as _, Sha256};
 use std::fmt::Write as _;
@@ -42,12 +42,14 @@ impl Study {
         Self::new(part, source, table)
     }
 
-    /// Studies `part`, which was read from `source`.
+    /// Studies `part`, which was read from `source`: materials, exact figures, and whether what is expected holds.
     ///
     /// # Errors
-    /// A material is not in the table, or a figure is too large for a number.
+    /// A material is not in the table, or a figure is too large or too small for a number.
     pub fn new(part: Part, source: Source<'_>, table: &shop::Table) -> Result<Self, Faults> {
         let materials = material::of_bodies(&part, source, table)?;
+        let exact = figures_of::part(&part, &materials, source)?;
+        let expect = expect::judgements(&part, &exact);
         let record = Record {
             strickle: VERSION,
             part: record::Part {
@@ -57,19 +59,27 @@ impl Study {
                 number: part.number.clone(),
                 revolve: part.revolve,
             },
-            exact: None,
+            exact: Some(exact),
             mesh: None,
             measured: None,
             audit: None,
             budget: None,
-            verdict: None,
-            expect: Vec::new(),
+            verdict: expect::verdict(&expect),
+            expect,
         };
         Ok(Self {
             part,
             materials,
             record,
         })
+    }
+
+    /// The exact figures.
+    pub fn exact(&self) -> &Exact {
+        self.record
+            .exact
+            .as_ref()
+            .expect("a study of a part starts with the exact figures")
     }
 }
 

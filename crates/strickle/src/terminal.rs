@@ -3,8 +3,8 @@
 use crate::arguments::Colour;
 use crate::failure::Failure;
 use crate::status::Status;
+use crate::style::{BAD, HINT};
 use anstream::AutoStream;
-use anstyle::{AnsiColor, Style};
 use miette::{GraphicalReportHandler, GraphicalTheme};
 use std::error::Error as _;
 use std::fmt::Write as _;
@@ -12,9 +12,6 @@ use std::io::{self, StderrLock, StdoutLock, Write as _};
 
 /// Columns where the terminal does not tell, and the most that messages use.
 const COLUMNS: usize = 80;
-
-const ERROR: Style = AnsiColor::Red.on_default().bold();
-const HINT: Style = AnsiColor::Cyan.on_default();
 
 /// The two streams, with the colours that they can show.
 pub(crate) struct Terminal {
@@ -75,13 +72,13 @@ impl Terminal {
                 let hints = hint
                     .as_ref()
                     .map_or_else(String::new, |hint| format!("{HINT}hint:{HINT:#} {hint}\n"));
-                format!("{ERROR}error:{ERROR:#} {message}\n{hints}")
+                format!("{BAD}error:{BAD:#} {message}\n{hints}")
             }
             Failure::Read { .. } | Failure::Write { .. } => {
                 let cause = failure
                     .source()
                     .map_or_else(String::new, |cause| format!(": {cause}"));
-                format!("{ERROR}error:{ERROR:#} {failure}{cause}\n")
+                format!("{BAD}error:{BAD:#} {failure}{cause}\n")
             }
         };
         // Nobody is left to be told where standard error fails too; the status still says it.

@@ -12,9 +12,11 @@
 //! assert_eq!(Scale::of(Kind::Volume, 6.2e-5).text(6.2e-5), "62.000 cm3");
 //! ```
 
+mod density;
 mod scale;
 mod units;
 
+pub use density::densities;
 pub use scale::Scale;
 pub use units::{Kind, System};
 

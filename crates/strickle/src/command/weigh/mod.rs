@@ -1,5 +1,13 @@
 //! `strickle weigh`.
 
+mod bodies;
+mod expected;
+mod inch;
+mod report;
+mod surfaces;
+mod theorems;
+mod whole;
+
 use crate::arguments::Weigh;
 use crate::command::each_part;
 use crate::failure::Failure;
@@ -8,6 +16,7 @@ use crate::terminal::Terminal;
 
 /// Prints the exact figures of each part and judges what it expects.
 pub(super) fn run(arguments: &Weigh, terminal: &mut Terminal) -> Result<Status, Failure> {
+    let mut first = true;
     each_part(
         &arguments.parts,
         &arguments.settings,
@@ -16,8 +25,10 @@ pub(super) fn run(arguments: &Weigh, terminal: &mut Terminal) -> Result<Status, 
             if arguments.output.json {
                 terminal.print(&study.record.line())?;
             } else {
-                terminal.show(&study.record.part.name)?;
+                let between = if first { "" } else { "\n\n" };
+                terminal.show(&format!("{between}{}", report::of(&study)))?;
             }
+            first = false;
             Ok(Status::of(study.record.verdict.as_ref()))
         },
     )

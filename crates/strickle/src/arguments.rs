@@ -90,8 +90,14 @@ pub(crate) enum Command {
     /// Write a commented starter part file
     New(New),
     /// Weigh parts: volume, surface, mass, centre and inertia, exact
+    ///
+    /// The figures are closed forms by the two theorems of Pappus and Guldin; what the part file expects is judged.
     Weigh(Weigh),
     /// List materials, or find them by words
+    ///
+    /// The table has densities in kg/m3 at 20 C. Your own materials stand in materials.toml in the program's folder among
+    /// your settings, as in a part file: any number of [[material]], each with name and density, and where you know them
+    /// range, aliases, words, contraction and source.
     Materials(Materials),
     /// Print the JSON Schema of the part file
     ///
@@ -108,9 +114,10 @@ pub(crate) enum Command {
 /// Arguments of `new`.
 #[derive(Debug, Args)]
 pub(crate) struct New {
-    /// Name of the part, and of the file NAME.toml; may name a folder too
+    /// Name of the part, and of its file: "Fog bell" is written to fog_bell.toml
     ///
-    /// A file that is there is never overwritten.
+    /// May be in a folder that is there, and may be the file's name itself: parts/bell.toml. A file that is there
+    /// already is never overwritten.
     pub(crate) name: PathBuf,
 }
 

@@ -6,10 +6,13 @@
 mod chords;
 mod expect;
 pub mod figures;
-mod figures_of;
+
 mod material;
 pub mod record;
+#[cfg(test)]
+mod sample;
 mod study;
+mod weighing;
 
 pub use material::BodyMaterial;
 pub use record::Record;

@@ -2,7 +2,7 @@
 
 use crate::material::{self, BodyMaterial};
 use crate::record::{self, Exact, Record};
-use crate::{VERSION, expect, figures_of};
+use crate::{VERSION, expect, weighing};
 use part::{Faults, Neighbours, Part, Setting};
 use sha2::{Digest as _, Sha256};
 use std::fmt::Write as _;
@@ -48,7 +48,7 @@ impl Study {
     /// A material is not in the table, or a figure is too large or too small for a number.
     pub fn new(part: Part, source: Source<'_>, table: &shop::Table) -> Result<Self, Faults> {
         let materials = material::of_bodies(&part, source, table)?;
-        let exact = figures_of::part(&part, &materials, source)?;
+        let exact = weighing::exact(&part, &materials, source)?;
         let expect = expect::judgements(&part, &exact);
         let record = Record {
             strickle: VERSION,

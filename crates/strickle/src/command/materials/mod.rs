@@ -21,6 +21,9 @@ pub(super) fn run(arguments: &Materials, terminal: &mut Terminal) -> Result<Stat
         terminal.print(&json::of(&found))?;
     } else {
         terminal.show(&page::of(&found))?;
+        if arguments.words.is_empty() {
+            terminal.show(&page::of_own(shelf::file().as_deref()))?;
+        }
     }
     Ok(Status::Holds)
 }

@@ -3,6 +3,7 @@
 use crate::grid::{Cell, Grid, shortened};
 use crate::style::{QUIET, STRONG};
 use shop::{Contraction, Material};
+use std::path::Path;
 use strickle::figures::{densities, plain};
 use unicode_width::UnicodeWidthStr as _;
 
@@ -23,6 +24,20 @@ pub(super) fn of(found: &[&Material]) -> String {
     } else {
         list(found)
     }
+}
+
+/// Where the user's own materials stand, or would.
+pub(super) fn of_own(file: Option<&Path>) -> String {
+    let Some(file) = file else {
+        return String::new();
+    };
+    let yet = if file.exists() {
+        ""
+    } else {
+        " (not there yet)"
+    };
+    let file = plain(&file.display().to_string());
+    format!("\n{QUIET}Your own: [[material]] in {file}{yet}{QUIET:#}\n")
 }
 
 /// A line a material.

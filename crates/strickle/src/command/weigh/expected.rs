@@ -21,7 +21,12 @@ pub(super) fn of(record: &Record) -> String {
         .map(|cell| cell.styled(QUIET)),
     );
     for judgement in &record.expect {
-        let size = judgement.wanted.abs().max(judgement.found.abs());
+        // A figure that should be zero is shown as finely as what it may differ by.
+        let [lower, upper] = judgement.deviation;
+        let size = [judgement.wanted, judgement.found, lower, upper]
+            .map(f64::abs)
+            .into_iter()
+            .fold(0.0, f64::max);
         let scale = Scale::of(judgement.kind, size);
         grid.row([
             Cell::left(judgement.quantity),

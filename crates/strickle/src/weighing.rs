@@ -1,12 +1,13 @@
 //! The exact figures of a part, from its regions and materials.
 
+use crate::Source;
 use crate::chords;
 use crate::material::BodyMaterial;
 use crate::record::{Body, Box3, Exact, Gyration, Implied, Matrix, Section, Surface};
-use crate::Source;
 use exact::{Solid, Whole};
 use glam::DMat3;
 use part::{Fault, Faults, Part};
+use std::collections::HashMap;
 
 /// What the surface of the two plane ends of a part turn is called.
 const END_CAPS: &str = "end caps";
@@ -15,7 +16,7 @@ const END_CAPS: &str = "end caps";
 ///
 /// # Errors
 /// The bodies whose figures are too large or too small for a number.
-pub(crate) fn part(
+pub(crate) fn exact(
     part: &Part,
     materials: &[BodyMaterial],
     source: Source<'_>,
@@ -117,8 +118,14 @@ fn of_body(name: &str, solid: &Solid, material: &BodyMaterial) -> Body {
 fn is_sound(body: &Body) -> bool {
     let inertia = body.inertia_about_centre.as_flattened();
     let positive = [body.volume, body.surface, body.mass, inertia[0], inertia[8]];
-    positive.into_iter().all(|figure| figure.is_normal() && figure > 0.0)
-        && body.centre.iter().chain(inertia).all(|figure| figure.is_finite())
+    positive
+        .into_iter()
+        .all(|figure| figure.is_normal() && figure > 0.0)
+        && body
+            .centre
+            .iter()
+            .chain(inertia)
+            .all(|figure| figure.is_finite())
 }
 
 /// The one density of all bodies, or mass over volume.
@@ -133,14 +140,19 @@ fn density(materials: &[BodyMaterial], whole: &Whole) -> f64 {
 
 /// Least and greatest mass; `None` where every density is fixed.
 fn mass_range(bodies: &[Body]) -> Option<[f64; 2]> {
-    bodies.iter().any(|body| body.density_range.is_some()).then(|| {
-        [0, 1].map(|end| {
-            bodies
-                .iter()
-                .map(|body| body.volume * body.density_range.map_or(body.density, |range| range[end]))
-                .sum()
+    bodies
+        .iter()
+        .any(|body| body.density_range.is_some())
+        .then(|| {
+            [0, 1].map(|end| {
+                bodies
+                    .iter()
+                    .map(|body| {
+                        body.volume * body.density_range.map_or(body.density, |range| range[end])
+                    })
+                    .sum()
+            })
         })
-    })
 }
 
 /// The surface by body and name: names in the order in which the outline meets them, then all edges without one, then
@@ -149,16 +161,22 @@ fn surfaces(part: &Part, solids: &[Solid]) -> Vec<Surface> {
     let mut surfaces = Vec::new();
     for (body, solid) in part.bodies.iter().zip(solids) {
         let mut named: Vec<(&str, f64)> = Vec::new();
+        let mut places: HashMap<&str, usize> = HashMap::new();
         let mut unnamed = None;
         for (outline, figures) in body.region.loops().zip(&solid.edges) {
             for (tag, edge) in outline.tags().iter().zip(figures) {
-                let step = usize::try_from(*tag).ok().and_then(|tag| body.steps.get(tag));
+                let step = usize::try_from(*tag)
+                    .ok()
+                    .and_then(|tag| body.steps.get(tag));
                 match step.and_then(|step| step.name.as_deref()) {
                     None => *unnamed.get_or_insert(0.0) += edge.surface,
-                    Some(name) => match named.iter_mut().find(|(known, _)| *known == name) {
-                        Some((_, area)) => *area += edge.surface,
-                        None => named.push((name, edge.surface)),
-                    },
+                    Some(name) => {
+                        let place = *places.entry(name).or_insert(named.len());
+                        match named.get_mut(place) {
+                            Some((_, area)) => *area += edge.surface,
+                            None => named.push((name, edge.surface)),
+                        }
+                    }
                 }
             }
         }
@@ -200,4 +218,136 @@ fn implied(part: &Part, section: &Section, volume: f64, swept: f64) -> Implied {
 fn rows(matrix: DMat3) -> Matrix {
     // By rows as by columns: it is symmetric.
     matrix.to_cols_array_2d()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::sample::{self, ring};
+    use std::f64::consts::{FRAC_PI_2, PI, TAU};
+
+    fn figures(sample: &Part, materials: &[BodyMaterial]) -> Exact {
+        exact(sample, materials, sample::SOURCE).unwrap()
+    }
+
+    fn material(density: f64, range: Option<[f64; 2]>) -> BodyMaterial {
+        BodyMaterial {
+            designation: None,
+            density,
+            range,
+        }
+    }
+
+    #[track_caller]
+    fn assert_near(found: f64, known: f64) {
+        assert!(
+            (found - known).abs() <= 1e-13 * known.abs(),
+            "{found} is not {known}"
+        );
+    }
+
+    #[test]
+    fn a_ring_has_the_figures_of_handbooks() {
+        let sample = sample::part(TAU, vec![ring("ring", 0.04, 0.06, -0.01, 0.02)]);
+        let exact = figures(&sample, &[material(7850.0, None)]);
+        let volume = PI * (0.06 * 0.06 - 0.04 * 0.04) * 0.03;
+        assert_near(exact.section.area, 0.02 * 0.03);
+        assert_near(exact.section.centroid_r, 0.05);
+        assert_near(exact.section.centroid_z, 0.005);
+        assert_near(exact.section.perimeter, 0.1);
+        assert_near(exact.volume, volume);
+        assert_near(exact.mass, volume * 7850.0);
+        assert_eq!(exact.density, 7850.0);
+        assert_eq!(exact.mass_range, None);
+        // Mass times the mean of the squared radii; across: the half of it and the twelfth of the squared height.
+        let squares = 0.06 * 0.06 + 0.04 * 0.04;
+        assert_near(exact.inertia_about_axis, exact.mass * squares / 2.0);
+        let across = exact.mass * (squares / 4.0 + 0.03 * 0.03 / 12.0);
+        assert_near(exact.inertia_about_centre[0][0], across);
+        assert_near(
+            exact.inertia_about_origin[1][1],
+            across + exact.mass * 0.005 * 0.005,
+        );
+        assert_near(exact.radii_of_gyration.axis, (squares / 2.0).sqrt());
+        assert_near(exact.largest_diameter, 0.12);
+        assert_near(exact.length, 0.03);
+        assert_near(exact.implied_centroid.area, 0.05);
+        assert!(exact.implied_centroid.difference < 1e-13);
+    }
+
+    #[test]
+    fn surfaces_are_grouped_by_body_and_name() {
+        let sample = sample::part(TAU, vec![ring("ring", 0.04, 0.06, 0.0, 0.03)]);
+        let exact = figures(&sample, &[material(1000.0, None)]);
+        let named: Vec<Option<&str>> = exact
+            .surfaces
+            .iter()
+            .map(|surface| surface.name.as_deref())
+            .collect();
+        assert_eq!(named, [Some("face"), Some("rim"), None]);
+        let face = PI * (0.06 * 0.06 - 0.04 * 0.04);
+        assert_near(exact.surfaces[0].area, 2.0 * face);
+        assert_near(exact.surfaces[1].area, TAU * 0.06 * 0.03);
+        assert_near(exact.surfaces[2].area, TAU * 0.04 * 0.03);
+        assert_near(
+            exact.surfaces.iter().map(|surface| surface.area).sum(),
+            exact.surface,
+        );
+    }
+
+    #[test]
+    fn a_part_turn_has_two_end_caps() {
+        let sample = sample::part(FRAC_PI_2, vec![ring("ring", 0.04, 0.06, 0.0, 0.03)]);
+        let exact = figures(&sample, &[material(1000.0, None)]);
+        let caps = exact.surfaces.last().unwrap();
+        assert_eq!(
+            (caps.name.as_deref(), caps.end_caps),
+            (Some("end caps"), true)
+        );
+        assert_near(caps.area, 2.0 * 0.02 * 0.03);
+        assert_near(exact.volume, PI / 4.0 * (0.06 * 0.06 - 0.04 * 0.04) * 0.03);
+        assert_near(exact.largest_diameter, 0.12);
+        assert!(exact.implied_centroid.difference < 1e-13);
+        // As much along x as along y, and each the other's mirror.
+        assert_near(exact.centre[0], exact.centre[1]);
+        assert!(exact.inertia_about_origin[0][1] < 0.0);
+    }
+
+    #[test]
+    fn bodies_add_up() {
+        let wheel = ring("wheel", 0.02, 0.06, 0.0, 0.03);
+        let bush = ring("bush", 0.01, 0.02, -0.01, 0.04);
+        let sample = sample::part(TAU, vec![wheel, bush]);
+        let exact = figures(
+            &sample,
+            &[
+                material(7200.0, Some([7050.0, 7350.0])),
+                material(9000.0, None),
+            ],
+        );
+        let [wheel, bush] = [0, 1].map(|index| exact.bodies[index].volume);
+        assert_near(exact.volume, wheel + bush);
+        assert_near(exact.mass, 7200.0 * wheel + 9000.0 * bush);
+        assert_near(exact.density, exact.mass / exact.volume);
+        let [least, most] = exact.mass_range.unwrap();
+        assert_near(least, 7050.0 * wheel + 9000.0 * bush);
+        assert_near(most, 7350.0 * wheel + 9000.0 * bush);
+        assert_near(
+            exact.surface,
+            exact.bodies[0].surface + exact.bodies[1].surface,
+        );
+        assert_near(exact.length, 0.05);
+        assert_near(exact.centre[2], 0.015);
+    }
+
+    #[test]
+    fn figures_that_are_no_numbers_are_refused() {
+        for scale in [1e120, 1e-90] {
+            let body = ring("ring", 0.04 * scale, 0.06 * scale, 0.0, 0.03 * scale);
+            let sample = sample::part(TAU, vec![body]);
+            let faults = exact(&sample, &[material(1000.0, None)], sample::SOURCE).unwrap_err();
+            let codes: Vec<_> = faults.iter().map(|fault| fault.code).collect();
+            assert_eq!(codes, ["study::out_of_range"]);
+        }
+    }
 }

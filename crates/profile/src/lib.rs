@@ -14,6 +14,7 @@
 mod arc;
 mod area;
 mod bezier;
+mod boundary;
 mod bounds;
 mod corner;
 mod edge;
@@ -26,12 +27,18 @@ mod nearest;
 mod outline;
 mod overlap;
 mod parallel;
+mod piece;
 mod polynomial;
 mod region;
+#[cfg(test)]
+mod samples;
 mod spiral;
+mod tolerance;
+mod tree;
 pub mod trig;
 mod validity;
 mod wall;
+mod winding;
 
 pub use arc::Arc;
 pub use bezier::Bezier;
@@ -43,10 +50,12 @@ pub use glam::DVec2;
 pub use index::{Nearest, Place, RegionIndex};
 pub use intersect::{Meeting, meetings, self_meetings};
 pub use line::Line;
+pub(crate) use nearest::{Seeker, Zone};
 pub use outline::{Loop, OpenLoop};
 pub use overlap::{BodyOverlap, overlaps};
 pub use parallel::{Base, Parallel};
 pub use region::Region;
+pub use tolerance::TOUCH;
 pub use validity::{EdgeRef, LARGEST, RegionFault, SMALLEST};
 pub use wall::{Grow, WallFault, wall};
 

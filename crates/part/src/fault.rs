@@ -1,8 +1,15 @@
 //! What is wrong with a part file, where, and what to do about it.
 
+use crate::source::Source;
 use std::fmt;
 use std::ops::Range;
 use std::sync::Arc;
+
+/// Faults that are shown; the number of the others is.
+const SHOWN: usize = 50;
+
+/// Faults that are kept while reading. More would only fill the memory.
+const KEPT: usize = 2000;
 
 /// A place in the text, in bytes.
 pub type Span = Range<usize>;
@@ -66,12 +73,49 @@ impl Fault {
     }
 }
 
-/// All that is wrong with one part file, in order of place. Never empty.
+/// Faults as they are found, in any order; past a certain number they are only counted.
+#[derive(Debug, Default)]
+pub(crate) struct Found {
+    faults: Vec<Fault>,
+    uncounted: usize,
+}
+
+impl Found {
+    pub(crate) fn push(&mut self, fault: Fault) {
+        if self.faults.len() < KEPT {
+            self.faults.push(fault);
+        } else {
+            self.uncounted += 1;
+        }
+    }
+
+    pub(crate) fn extend(&mut self, faults: impl IntoIterator<Item = Fault>) {
+        for fault in faults {
+            self.push(fault);
+        }
+    }
+
+    pub(crate) fn count(&self) -> usize {
+        self.faults.len() + self.uncounted
+    }
+
+    pub(crate) fn is_empty(&self) -> bool {
+        self.faults.is_empty()
+    }
+
+    /// Drops the faults with these codes: they may be consequences of others.
+    pub(crate) fn drop_codes(&mut self, codes: &[&str]) {
+        self.faults.retain(|fault| !codes.contains(&fault.code));
+    }
+}
+
+/// All that is wrong with one part file, in order of place; at most fifty, and then one that says how many more there are.
+/// Never empty.
 ///
-/// As a [`miette::Diagnostic`] it shows the file's lines with each place underlined.
+/// Each of the [diagnostics](Self::diagnostics) shows the file's lines with the place underlined.
 #[derive(Clone)]
 pub struct Faults {
-    source: Arc<miette::NamedSource<String>>,
+    source: Arc<Source>,
     faults: Vec<Located>,
 }
 
@@ -79,23 +123,50 @@ pub struct Faults {
 #[derive(Clone)]
 struct Located {
     fault: Fault,
-    source: Arc<miette::NamedSource<String>>,
+    source: Arc<Source>,
 }
 
 impl Faults {
     /// The faults of the text `text` of the file `file` (a name for people); `None` where there are none.
-    pub fn of(file: &str, text: &str, mut faults: Vec<Fault>) -> Option<Self> {
+    pub fn of(file: &str, text: &str, faults: Vec<Fault>) -> Option<Self> {
+        let found = Found {
+            faults,
+            uncounted: 0,
+        };
+        Self::gather(file, text.to_owned(), found)
+    }
+
+    /// As [`Self::of`], of faults found while reading.
+    pub(crate) fn gather(file: &str, text: String, found: Found) -> Option<Self> {
+        let Found {
+            mut faults,
+            uncounted,
+        } = found;
         if faults.is_empty() {
             return None;
         }
         faults.sort_by_key(|fault| fault.labels.first().map_or(0, |label| label.span.start));
-        let source =
-            Arc::new(miette::NamedSource::new(file, text.to_owned()).with_language("toml"));
+        if faults.len() > SHOWN {
+            let more = faults.len() - SHOWN + uncounted;
+            faults.truncate(SHOWN);
+            faults.push(Fault {
+                code: "part::more_faults",
+                message: format!("and {more} more faults that are not shown"),
+                labels: Vec::new(),
+                help: Some("mend the first ones and run it again: many may have one cause".into()),
+            });
+        }
+        let source = Arc::new(Source::new(file, text));
         let faults = faults
             .into_iter()
-            .map(|fault| Located {
-                fault,
-                source: Arc::clone(&source),
+            .map(|mut fault| {
+                for label in &mut fault.labels {
+                    label.span = source.underlined(&label.span);
+                }
+                Located {
+                    fault,
+                    source: Arc::clone(&source),
+                }
             })
             .collect();
         Some(Self { source, faults })
@@ -172,9 +243,17 @@ impl miette::Diagnostic for Located {
     }
 
     fn labels(&self) -> Option<Box<dyn Iterator<Item = miette::LabeledSpan> + '_>> {
-        Some(Box::new(self.fault.labels.iter().map(|label| {
-            let text = (!label.text.is_empty()).then(|| label.text.clone());
-            miette::LabeledSpan::new(text, label.span.start, label.span.len())
-        })))
+        // The first label is the place that the fault is reported at, wherever the others are.
+        Some(Box::new(self.fault.labels.iter().enumerate().map(
+            |(i, label)| {
+                let text = (!label.text.is_empty()).then(|| label.text.clone());
+                let span = (label.span.start, label.span.len());
+                if i == 0 {
+                    miette::LabeledSpan::new_primary_with_span(text, span)
+                } else {
+                    miette::LabeledSpan::new_with_span(text, span)
+                }
+            },
+        )))
     }
 }

@@ -8,9 +8,13 @@
 //! plain numbers -> edges -> corners treated -> regions checked against each other.
 
 mod fault;
+mod limits;
 mod model;
+mod nearest;
 pub mod outline;
 mod read;
+mod source;
+mod tree;
 
 pub use fault::{Fault, Faults, Label, Span};
 pub use model::{

@@ -1,0 +1,54 @@
+//! Expressions: numbers with units, names of sizes, arithmetic.
+
+mod evaluate;
+mod function;
+mod parse;
+mod token;
+
+pub(crate) use evaluate::{Failure, Quantity, Scope, evaluate};
+pub(crate) use parse::{Expression, Names, Parsed, parse};
+pub(crate) use function::FUNCTIONS;
+pub(crate) use token::{Placed, Token};
+
+use crate::Span;
+use std::ops::Range;
+
+/// The text of an expression and where it stands.
+#[derive(Debug, Clone)]
+pub(crate) struct Written<'e> {
+    /// The text.
+    pub(crate) text: &'e str,
+    whole: Span,
+    /// Where the text's first byte is; `None` where escapes hide that.
+    start: Option<usize>,
+}
+
+impl<'e> Written<'e> {
+    /// A text at `start`, as the string at `whole` gives it.
+    pub(crate) fn new(text: &'e str, whole: Span, start: Option<usize>) -> Self {
+        Self { text, whole, start }
+    }
+
+    /// A text that was typed by itself.
+    pub(crate) fn typed(text: &'e str) -> Self {
+        Self::new(text, 0..text.len(), Some(0))
+    }
+
+    /// A text that was typed elsewhere, for the value at `place`.
+    pub(crate) fn elsewhere(text: &'e str, place: Span) -> Self {
+        Self::new(text, place, None)
+    }
+
+    /// Place of a part of it; of all of it where escapes hide the part.
+    pub(crate) fn span(&self, at: Range<usize>) -> Span {
+        match self.start {
+            Some(start) => start + at.start..start + at.end,
+            None => self.whole.clone(),
+        }
+    }
+
+    /// Place of the whole value, with its quotes.
+    pub(crate) fn whole(&self) -> Span {
+        self.whole.clone()
+    }
+}

@@ -1,0 +1,588 @@
+//! From words to statements, lists and tables.
+
+use super::assembly::{Assembly, KeyPath};
+use super::table::{Key, Origin, Table};
+use super::{Kind, List, Value};
+use crate::fault::Found;
+use crate::{Fault, Span, limits};
+use std::borrow::Cow;
+use toml_parser::Source;
+use toml_parser::lexer::{Lexer, Token, TokenKind};
+
+/// The tree of `text`, which is at most [`limits::TEXT`] long. What is wrong goes to `found`.
+pub(crate) fn parse<'t>(text: &'t str, found: &mut Found) -> Document<'t> {
+    let source = Source::new(text);
+    let mut lexer = source.lex();
+    let first = lexer
+        .next()
+        .expect("a lexer gives at least the end of the text");
+    let mut grammar = Grammar {
+        text,
+        source,
+        lexer,
+        token: first,
+        found,
+        end: None,
+        open: 0,
+        values: 0,
+        damaged: false,
+    };
+    let root = grammar.document();
+    Document {
+        root,
+        damaged: grammar.damaged,
+    }
+}
+
+/// A file as a tree.
+#[derive(Debug)]
+pub(crate) struct Document<'t> {
+    /// The keys and tables at the top.
+    pub(crate) root: Table<'t>,
+    /// True where a statement could not be read, so that what seems to be missing may be there.
+    pub(crate) damaged: bool,
+}
+
+/// The structure is lost; a fault has been reported, and the statement is to be skipped.
+#[derive(Debug)]
+pub(super) struct Lost;
+
+pub(super) struct Grammar<'t, 'f> {
+    pub(super) text: &'t str,
+    pub(super) source: Source<'t>,
+    lexer: Lexer<'t>,
+    /// The word that is looked at.
+    pub(super) token: Token,
+    pub(super) found: &'f mut Found,
+    /// The end of the text, once the rest of it is not to be read.
+    end: Option<Token>,
+    /// Brackets and braces open here.
+    open: usize,
+    /// Values so far.
+    values: usize,
+    damaged: bool,
+}
+
+impl<'t> Grammar<'t, '_> {
+    /// Goes on to the next word; at the end of the text it stays.
+    pub(super) fn next(&mut self) {
+        if let Some(token) = self.end.or_else(|| self.lexer.next()) {
+            self.token = token;
+        }
+    }
+
+    pub(super) fn at(&self, kind: TokenKind) -> bool {
+        self.token.kind() == kind
+    }
+
+    pub(super) fn span(&self) -> Span {
+        self.token.span().start()..self.token.span().end()
+    }
+
+    fn spaces(&mut self) {
+        while self.at(TokenKind::Whitespace) {
+            self.next();
+        }
+    }
+
+    /// Passes blanks, comments and line ends.
+    fn blanks(&mut self) {
+        loop {
+            match self.token.kind() {
+                TokenKind::Whitespace => {}
+                TokenKind::Newline => self.line_end(),
+                TokenKind::Comment => self.comment(),
+                _ => return,
+            }
+            self.next();
+        }
+    }
+
+    fn line_end(&mut self) {
+        let span = self.span();
+        if &self.text[span.clone()] == "\r" {
+            self.found.push(
+                Fault::new(
+                    "toml::control_character",
+                    "a carriage return stands where no line ends",
+                    span,
+                    "",
+                )
+                .help("save the file with line ends LF or CR LF"),
+            );
+        }
+    }
+
+    fn comment(&mut self) {
+        let mut first = None;
+        if let Some(raw) = self.source.get(self.token) {
+            raw.decode_comment(&mut |error: toml_parser::ParseError| {
+                first = first.or(error.unexpected());
+            });
+        }
+        if let Some(place) = first {
+            self.found.push(control_character(place.start()));
+        }
+    }
+
+    fn document(&mut self) -> Table<'t> {
+        let mut assembly = Assembly::new();
+        loop {
+            self.blanks();
+            match self.token.kind() {
+                TokenKind::Eof => return assembly.finish(),
+                TokenKind::LeftSquareBracket => self.header(&mut assembly),
+                _ => self.statement(&mut assembly),
+            }
+        }
+    }
+
+    /// `[a.b]` or `[[a.b]]`.
+    fn header(&mut self, assembly: &mut Assembly<'t>) {
+        let start = self.span().start;
+        self.next();
+        let of_list = self.at(TokenKind::LeftSquareBracket);
+        if of_list {
+            self.next();
+        }
+        self.spaces();
+        let Ok(path) = self.key("a table has a name between its brackets") else {
+            assembly.lose_header();
+            return self.recover();
+        };
+        self.spaces();
+        let closed = self.at(TokenKind::RightSquareBracket) && {
+            if of_list {
+                self.next();
+            }
+            self.at(TokenKind::RightSquareBracket)
+        };
+        if !closed {
+            let brackets = if of_list { "[[ and ]]" } else { "[ and ]" };
+            self.found.push(
+                Fault::new(
+                    "toml::header",
+                    "the table's header is not closed",
+                    start..self.span().start,
+                    "",
+                )
+                .help(format!("the name stands between {brackets}")),
+            );
+            assembly.lose_header();
+            return self.recover();
+        }
+        let span = start..self.span().end;
+        self.next();
+        if self.count(&span).is_err() {
+            return self.recover();
+        }
+        assembly.header(path, of_list, &span, self.found);
+        self.end_of_statement();
+    }
+
+    /// `key = value`.
+    fn statement(&mut self, assembly: &mut Assembly<'t>) {
+        let Ok(path) = self.key("a line is a key, an equals sign and a value") else {
+            return self.recover();
+        };
+        let value = self.assigned(&path, 0);
+        let lost = value.is_err();
+        let span = path.span();
+        let value = value.unwrap_or_else(|Lost| Value::new(Kind::Broken, &span));
+        assembly.insert(path, value, self.found);
+        if lost {
+            self.recover();
+        } else {
+            self.end_of_statement();
+        }
+    }
+
+    /// The equals sign and the value after a key.
+    fn assigned(&mut self, path: &KeyPath<'t>, depth: usize) -> Result<Value<'t>, Lost> {
+        self.spaces();
+        if !self.at(TokenKind::Equals) {
+            let key = path.last();
+            let mut fault = Fault::new(
+                "toml::equals",
+                format!("an equals sign is missing after `{}`", key.name),
+                key.span.clone(),
+                "",
+            );
+            fault = if key.name.bytes().all(|byte| byte.is_ascii_digit()) {
+                fault.help("a decimal number is written with a point: 12.5")
+            } else {
+                fault.help(format!("write {} = and its value", key.name))
+            };
+            self.found.push(fault);
+            return Err(Lost);
+        }
+        self.next();
+        self.spaces();
+        self.value(depth)
+    }
+
+    /// After a header or a value nothing more stands on the line.
+    fn end_of_statement(&mut self) {
+        self.spaces();
+        match self.token.kind() {
+            TokenKind::Newline | TokenKind::Comment | TokenKind::Eof => return,
+            _ => {}
+        }
+        let fault = Fault::new(
+            "toml::after_value",
+            "something stands after the value where the line should end",
+            self.span(),
+            "",
+        );
+        let fault = match self.token.kind() {
+            TokenKind::Comma => fault
+                .help("a decimal number is written with a point: 12.5; lines end without a comma"),
+            TokenKind::RightSquareBracket | TokenKind::RightCurlyBracket => {
+                fault.help("this closes nothing that is open; take it away")
+            }
+            _ => fault.help("begin a new line, or write # before a remark"),
+        };
+        self.found.push(fault);
+        self.recover();
+    }
+
+    /// One or several words with points between.
+    fn key(&mut self, expected: &'static str) -> Result<KeyPath<'t>, Lost> {
+        let mut path = KeyPath::default();
+        loop {
+            let key = self.simple_key(expected)?;
+            path.push(key);
+            // A blank may stand before the point.
+            let blank =
+                self.at(TokenKind::Whitespace) && self.text[self.span().end..].starts_with('.');
+            if blank {
+                self.next();
+            }
+            if !self.at(TokenKind::Dot) {
+                return Ok(path);
+            }
+            if path.len() == limits::NESTING {
+                self.too_deep();
+                return Err(Lost);
+            }
+            self.next();
+            self.spaces();
+        }
+    }
+
+    fn simple_key(&mut self, expected: &'static str) -> Result<Key<'t>, Lost> {
+        let span = self.span();
+        let quoted = match self.token.kind() {
+            TokenKind::Atom => false,
+            TokenKind::BasicString | TokenKind::LiteralString => true,
+            kind => {
+                let (message, help) = match kind {
+                    TokenKind::Equals => ("a key is missing before the equals sign", expected),
+                    TokenKind::MlBasicString | TokenKind::MlLiteralString => (
+                        "a key is not written over several lines",
+                        "write the key without quotes",
+                    ),
+                    _ => ("a key is expected here", expected),
+                };
+                self.found
+                    .push(Fault::new("toml::key", message, span, "").help(help));
+                return Err(Lost);
+            }
+        };
+        let mut name = Cow::Borrowed("");
+        let mut wrong = None;
+        if let Some(raw) = self.source.get(self.token) {
+            raw.decode_key(&mut name, &mut |error: toml_parser::ParseError| {
+                wrong = wrong.take().or(Some(error.unexpected()));
+            });
+        }
+        if let Some(place) = wrong {
+            self.found.push(if quoted {
+                Fault::new("toml::key", "the key in quotes cannot be read", span, "")
+                    .help("write the key without quotes")
+            } else {
+                bad_key(&self.text[span.clone()], &span, place)
+            });
+            return Err(Lost);
+        }
+        self.next();
+        Ok(Key { name, span })
+    }
+
+    /// A value; `depth` lists and tables are around it.
+    fn value(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
+        let span = self.span();
+        self.count(&span)?;
+        match self.token.kind() {
+            TokenKind::BasicString
+            | TokenKind::LiteralString
+            | TokenKind::MlBasicString
+            | TokenKind::MlLiteralString => self.string(),
+            TokenKind::Atom | TokenKind::Dot => Ok(self.scalar()),
+            TokenKind::LeftSquareBracket | TokenKind::LeftCurlyBracket => {
+                if depth == limits::NESTING {
+                    self.too_deep();
+                    return Err(Lost);
+                }
+                self.open += 1;
+                let value = if self.at(TokenKind::LeftSquareBracket) {
+                    self.list(depth)?
+                } else {
+                    self.inline_table(depth)?
+                };
+                self.open -= 1;
+                Ok(value)
+            }
+            _ => {
+                self.found.push(
+                    Fault::new("toml::value", "a value is missing here", span, "").help(
+                        "a value is a number, a text in quotes, true, false, a list [..] or a table {..}",
+                    ),
+                );
+                Err(Lost)
+            }
+        }
+    }
+
+    fn list(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
+        let open = self.span();
+        let mut items = Vec::new();
+        self.next();
+        loop {
+            self.blanks();
+            if self.at(TokenKind::RightSquareBracket) {
+                let span = open.start..self.span().end;
+                self.next();
+                items.shrink_to_fit();
+                let of_tables = false;
+                return Ok(Value::new(
+                    Kind::List(Box::new(List { items, of_tables })),
+                    &span,
+                ));
+            }
+            if self.at(TokenKind::Eof) || self.at_statement() {
+                return self.unclosed(open, "list", "]");
+            }
+            items.push(self.value(depth + 1)?);
+            self.blanks();
+            match self.token.kind() {
+                TokenKind::Comma => self.next(),
+                TokenKind::RightSquareBracket | TokenKind::Eof => {}
+                _ if self.at_statement() => {}
+                TokenKind::Equals => {
+                    self.found.push(
+                        Fault::new(
+                            "toml::key_in_list",
+                            "a list holds values, not keys",
+                            self.span(),
+                            "",
+                        )
+                        .also(open, "the list begins here")
+                        .help("a step with its keys stands in braces: { d = 40, z = 0 }"),
+                    );
+                    return Err(Lost);
+                }
+                TokenKind::RightCurlyBracket => {
+                    return self.unclosed(open, "list", "]");
+                }
+                _ => self.missing_comma(),
+            }
+        }
+    }
+
+    fn inline_table(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
+        let open = self.span();
+        let mut table = Table::new(Origin::Inline);
+        self.next();
+        loop {
+            self.blanks();
+            match self.token.kind() {
+                TokenKind::RightCurlyBracket => {
+                    let span = open.start..self.span().end;
+                    self.next();
+                    table.entries.shrink_to_fit();
+                    return Ok(Value::new(Kind::Table(Box::new(table)), &span));
+                }
+                TokenKind::Eof
+                | TokenKind::LeftCurlyBracket
+                | TokenKind::LeftSquareBracket
+                | TokenKind::RightSquareBracket => return self.unclosed(open, "table", "}"),
+                _ => {}
+            }
+            let path = self.key("a table holds keys with values: { d = 40, z = 0 }")?;
+            let value = self.assigned(&path, depth + 1)?;
+            Assembly::insert_inline(&mut table, path, value, self.found);
+            self.blanks();
+            match self.token.kind() {
+                TokenKind::Comma => self.next(),
+                TokenKind::Atom | TokenKind::BasicString | TokenKind::LiteralString => {
+                    self.missing_comma();
+                }
+                TokenKind::Equals | TokenKind::Dot => {
+                    self.found.push(
+                        Fault::new("toml::comma", "a comma is expected here", self.span(), "")
+                            .help("between two keys of a table stands a comma"),
+                    );
+                    return Err(Lost);
+                }
+                _ => {}
+            }
+        }
+    }
+
+    /// Reports a comma missing before this word, and goes on as if it were there.
+    pub(super) fn missing_comma(&mut self) {
+        let at = self.span().start;
+        let before = self.text[..at].trim_end().len();
+        self.found.push(
+            Fault::new("toml::comma", "a comma is missing here", before..before, "")
+                .help("between two values stands a comma"),
+        );
+    }
+
+    fn unclosed<T>(&mut self, open: Span, what: &str, closing: &str) -> Result<T, Lost> {
+        self.found.push(
+            Fault::new(
+                "toml::unclosed",
+                format!("the {what} that begins here is not closed"),
+                open,
+                "",
+            )
+            .also(
+                self.span().start..self.span().start,
+                format!("`{closing}` is expected before this"),
+            )
+            .help(format!("write {closing} at the end of the {what}")),
+        );
+        Err(Lost)
+    }
+
+    fn too_deep(&mut self) {
+        self.found.push(
+            Fault::new(
+                "limit::nesting",
+                format!(
+                    "lists and tables stand in each other more than {} deep",
+                    limits::NESTING
+                ),
+                self.span(),
+                "",
+            )
+            .help("no part needs that; look for a bracket that is not closed"),
+        );
+    }
+
+    /// Counts a value. Past the limit the rest of the text is not read.
+    fn count(&mut self, span: &Span) -> Result<(), Lost> {
+        self.values += 1;
+        if self.values <= limits::VALUES {
+            return Ok(());
+        }
+        self.found.push(
+            Fault::new(
+                "limit::values",
+                format!("the file has more than {} values", limits::VALUES),
+                span.clone(),
+                "the rest is not read",
+            )
+            .help("give an outline of so many points in a CSV file"),
+        );
+        self.end = self.lexer.by_ref().last();
+        Err(Lost)
+    }
+
+    /// True where a new statement begins although a list is still open: the line is a header, or `key =`.
+    fn at_statement(&self) -> bool {
+        let start = self.span().start;
+        let line_start = self.text[..start].trim_end_matches([' ', '\t']);
+        if !(line_start.is_empty() || line_start.ends_with('\n')) {
+            return false;
+        }
+        match self.token.kind() {
+            TokenKind::Atom => self.text[self.span().end..]
+                .trim_start_matches([' ', '\t'])
+                .starts_with('='),
+            TokenKind::LeftSquareBracket => is_header(&self.text[start..]),
+            _ => false,
+        }
+    }
+
+    /// Skips to the next statement after the structure was lost.
+    fn recover(&mut self) {
+        self.damaged = true;
+        loop {
+            match self.token.kind() {
+                TokenKind::Eof => break,
+                TokenKind::LeftSquareBracket | TokenKind::LeftCurlyBracket => self.open += 1,
+                TokenKind::RightSquareBracket | TokenKind::RightCurlyBracket => {
+                    self.open = self.open.saturating_sub(1);
+                }
+                TokenKind::Newline => {
+                    self.next();
+                    self.spaces();
+                    if self.open == 0 || self.at_statement() {
+                        break;
+                    }
+                    continue;
+                }
+                _ => {}
+            }
+            self.next();
+        }
+        self.open = 0;
+    }
+}
+
+/// True where the line that `text` begins with is a table's header: `[size]`, `[[body]]`.
+fn is_header(text: &str) -> bool {
+    let line = text.lines().next().unwrap_or_default();
+    let line = line.split('#').next().unwrap_or_default().trim_end();
+    let Some(inner) = line
+        .strip_prefix('[')
+        .and_then(|line| line.strip_suffix(']'))
+    else {
+        return false;
+    };
+    let name = inner
+        .strip_prefix('[')
+        .and_then(|inner| inner.strip_suffix(']'))
+        .unwrap_or(inner)
+        .trim();
+    name.starts_with(|c: char| c.is_ascii_alphabetic())
+        && !matches!(name, "true" | "false" | "inf" | "nan")
+        && name
+            .bytes()
+            .all(|byte| byte.is_ascii_alphanumeric() || matches!(byte, b'_' | b'-' | b'.'))
+}
+
+pub(super) fn control_character(at: usize) -> Fault {
+    Fault::new(
+        "toml::control_character",
+        "a control character stands here that cannot be seen",
+        at..at + 1,
+        "",
+    )
+    .help("delete it and type the line again")
+}
+
+/// A key without quotes that has a character it may not have, the first of them at `place`.
+fn bad_key(key: &str, span: &Span, place: Option<toml_parser::Span>) -> Fault {
+    let at = place.map_or(span.start, |place| place.start());
+    let wrong = key
+        .get(at - span.start..)
+        .and_then(|rest| rest.chars().next());
+    let fault = Fault::new(
+        "toml::key",
+        "a key is made of letters a to z, digits, - and _",
+        at..at + wrong.map_or(1, char::len_utf8),
+        "",
+    );
+    match wrong {
+        Some(':') => fault.help(format!(
+            "write an equals sign between key and value: {} =",
+            key.trim_end_matches(':')
+        )),
+        Some(wrong) => fault.help(format!("take `{wrong}` away, or put the key in quotes")),
+        None => fault,
+    }
+}

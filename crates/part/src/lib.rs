@@ -7,14 +7,28 @@
 //! The way of a text: [`toml`] with spans -> tables checked key by key -> expressions evaluated -> [`outline::Step`]s with
 //! plain numbers -> edges -> corners treated -> regions checked against each other.
 
+mod body;
+mod dimension;
+mod expect;
+mod expression;
 mod fault;
+mod head;
+mod kind;
 mod limits;
+mod material;
 mod model;
 mod nearest;
 pub mod outline;
+mod physical;
+mod point;
 mod read;
+mod sizes;
 mod source;
+mod steps;
+mod tolerance;
 mod tree;
+mod units;
+mod values;
 
 pub use fault::{Fault, Faults, Label, Span};
 pub use model::{

@@ -51,6 +51,19 @@ pub(crate) fn listed(words: &[&str]) -> String {
     words.join(", ")
 }
 
+/// A count with its thousands apart: `100,000`.
+pub(crate) fn grouped(count: usize) -> String {
+    let digits = count.to_string();
+    let mut grouped = String::new();
+    for (at, digit) in digits.char_indices() {
+        if at > 0 && (digits.len() - at) % 3 == 0 {
+            grouped.push(',');
+        }
+        grouped.push(digit);
+    }
+    grouped
+}
+
 /// A word of the file as a message repeats it: not longer than a line.
 pub(crate) fn shown(word: &str) -> String {
     const LONGEST: usize = 40;
@@ -78,6 +91,12 @@ mod tests {
         assert_eq!(nearest("Chamfre", KEYS), Some("chamfer"));
         assert_eq!(nearest("ruond", KEYS), Some("round"));
         assert_eq!(nearest("D", KEYS), Some("d"));
+    }
+
+    #[test]
+    fn thousands() {
+        let counts = [7, 100, 1000, 65_536, 1_250_000].map(grouped);
+        assert_eq!(counts, ["7", "100", "1,000", "65,536", "1,250,000"]);
     }
 
     #[test]

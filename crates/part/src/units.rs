@@ -204,8 +204,8 @@ impl Unit {
         match vocabulary {
             Vocabulary::Drawing => &["mm", "cm", "m", "um", "in", "ft", "deg", "rad"],
             Vocabulary::Physical => &[
-                "mm", "cm", "m", "in", "ft", "kg", "g", "t", "lb", "l", "cm2", "m2", "cm3", "m3", "kg/m3",
-                "g/cm3", "lb/in3", "kg m2",
+                "mm", "cm", "m", "in", "ft", "kg", "g", "t", "lb", "l", "cm2", "m2", "cm3", "m3",
+                "kg/m3", "g/cm3", "lb/in3", "kg m2",
             ],
         }
     }

@@ -1,8 +1,8 @@
 //! The value of an expression, with its dimension checked at every step.
 
+use super::Written;
 use super::function::{Function, cos_degrees, sin_degrees};
 use super::parse::{Expression, Operation};
-use super::Written;
 use crate::dimension::Dimension;
 use crate::{Fault, LengthUnit};
 use profile::trig;
@@ -156,12 +156,11 @@ impl Machine<'_> {
                 let place = from.start..at.end;
                 if !quantity.is_bare() {
                     return Err(self
-                        .fault(
-                            "expression::unit_twice",
-                            "this has a unit already",
-                            at,
+                        .fault("expression::unit_twice", "this has a unit already", at)
+                        .also(
+                            self.written.span(from),
+                            "a bare number is expected before a unit",
                         )
-                        .also(self.written.span(from), "a bare number is expected before a unit")
                         .help("a unit stands after a bare number")
                         .into());
                 }
@@ -193,19 +192,23 @@ impl Machine<'_> {
                 let (left, right) = self.operands();
                 let dimension = left.quantity.dimension + right.quantity.dimension;
                 let value = left.quantity.value * right.quantity.value;
-                joined(value, dimension, &left, &right)
+                scaled(value, dimension, &left, &right)
             }
             Operation::Divide => {
                 let (left, right) = self.operands();
                 if right.quantity.value == 0.0 {
                     return Err(self
-                        .fault("expression::division_by_zero", "this is a division by zero", &right.at)
+                        .fault(
+                            "expression::division_by_zero",
+                            "this is a division by zero",
+                            &right.at,
+                        )
                         .help("the divisor comes to 0 with the sizes as they are")
                         .into());
                 }
                 let dimension = left.quantity.dimension - right.quantity.dimension;
                 let value = left.quantity.value / right.quantity.value;
-                joined(value, dimension, &left, &right)
+                scaled(value, dimension, &left, &right)
             }
             Operation::Power => {
                 let (left, right) = self.operands();
@@ -214,13 +217,21 @@ impl Machine<'_> {
         };
         if !operand.quantity.value.is_finite() {
             return Err(self
-                .fault("expression::not_finite", "this is too large to be computed", &operand.at)
+                .fault(
+                    "expression::not_finite",
+                    "this is too large to be computed",
+                    &operand.at,
+                )
                 .help("look for a wrong power or for digits too many")
                 .into());
         }
         if !operand.quantity.dimension.is_sensible() {
             return Err(self
-                .fault("expression::power", "this comes to an absurd power of a unit", &operand.at)
+                .fault(
+                    "expression::power",
+                    "this comes to an absurd power of a unit",
+                    &operand.at,
+                )
                 .help("a volume is the third power of a length")
                 .into());
         }
@@ -236,7 +247,10 @@ impl Machine<'_> {
 
     /// Gives bare numbers among `operands` the dimension of the others, which must all have the same.
     fn unify(&self, operands: &mut [Operand], verb: &str) -> Result<(), Failure> {
-        let Some(first) = operands.iter().position(|operand| !operand.quantity.is_bare()) else {
+        let Some(first) = operands
+            .iter()
+            .position(|operand| !operand.quantity.is_bare())
+        else {
             return Ok(());
         };
         let dimension = operands[first].quantity.dimension;
@@ -310,7 +324,11 @@ impl Machine<'_> {
         }
         if value == 0.0 && number < 0.0 {
             return Err(self
-                .fault("expression::division_by_zero", "this is a division by zero", &base.at)
+                .fault(
+                    "expression::division_by_zero",
+                    "this is a division by zero",
+                    &base.at,
+                )
                 .help("the base of a negative power comes to 0 with the sizes as they are")
                 .into());
         }
@@ -449,7 +467,10 @@ impl Machine<'_> {
             return Err(self
                 .fault(
                     "expression::out_of_range",
-                    format!("{} takes values from -1 to 1, and this is {value}", function.word()),
+                    format!(
+                        "{} takes values from -1 to 1, and this is {value}",
+                        function.word()
+                    ),
                     &operand.at,
                 )
                 .help("no angle has such a sine or cosine")
@@ -486,4 +507,14 @@ fn joined(value: f64, dimension: Dimension, left: &Operand, right: &Operand) -> 
         },
         at: left.at.start..right.at.end,
     }
+}
+
+/// A product or quotient: a bare number times a ratio is a bare number still, so that `20 * sin(30)` can be a length.
+fn scaled(value: f64, dimension: Dimension, left: &Operand, right: &Operand) -> Operand {
+    let mut product = joined(value, dimension, left, right);
+    let bare = left.quantity.is_bare() || right.quantity.is_bare();
+    if bare && dimension == Dimension::NUMBER {
+        product.quantity.made_of = MadeOf::Numbers;
+    }
+    product
 }

@@ -72,7 +72,11 @@ pub(super) fn sin_degrees(degrees: f64) -> f64 {
 /// Cosine of an angle in degrees; exact where the cosine is 0, 1/2 or 1.
 pub(super) fn cos_degrees(degrees: f64) -> f64 {
     let turned = (degrees % 360.0).abs();
-    let half = if turned > 180.0 { 360.0 - turned } else { turned };
+    let half = if turned > 180.0 {
+        360.0 - turned
+    } else {
+        turned
+    };
     if half > 90.0 {
         -sin_acute(half - 90.0)
     } else {
@@ -99,11 +103,31 @@ mod tests {
 
     #[test]
     fn plain_angles_are_exact() {
-        let sines = [(0.0, 0.0), (30.0, 0.5), (90.0, 1.0), (150.0, 0.5), (180.0, 0.0), (270.0, -1.0), (-30.0, -0.5), (390.0, 0.5), (330.0, -0.5)];
+        let sines = [
+            (0.0, 0.0),
+            (30.0, 0.5),
+            (90.0, 1.0),
+            (150.0, 0.5),
+            (180.0, 0.0),
+            (270.0, -1.0),
+            (-30.0, -0.5),
+            (390.0, 0.5),
+            (330.0, -0.5),
+        ];
         for (angle, sine) in sines {
             assert_eq!(sin_degrees(angle), sine, "sin {angle}");
         }
-        let cosines = [(0.0, 1.0), (60.0, 0.5), (90.0, 0.0), (120.0, -0.5), (180.0, -1.0), (240.0, -0.5), (270.0, 0.0), (-60.0, 0.5), (360.0, 1.0)];
+        let cosines = [
+            (0.0, 1.0),
+            (60.0, 0.5),
+            (90.0, 0.0),
+            (120.0, -0.5),
+            (180.0, -1.0),
+            (240.0, -0.5),
+            (270.0, 0.0),
+            (-60.0, 0.5),
+            (360.0, 1.0),
+        ];
         for (angle, cosine) in cosines {
             assert_eq!(cos_degrees(angle), cosine, "cos {angle}");
         }

@@ -5,9 +5,9 @@ mod function;
 mod parse;
 mod token;
 
-pub(crate) use evaluate::{Failure, Quantity, Scope, evaluate};
-pub(crate) use parse::{Expression, Names, Parsed, parse};
+pub(crate) use evaluate::{Failure, MadeOf, Quantity, Scope, evaluate};
 pub(crate) use function::FUNCTIONS;
+pub(crate) use parse::{Expression, Names, Parsed, parse, parse_tokens, tokens_of};
 pub(crate) use token::{Placed, Token};
 
 use crate::Span;
@@ -44,6 +44,15 @@ impl<'e> Written<'e> {
         match self.start {
             Some(start) => start + at.start..start + at.end,
             None => self.whole.clone(),
+        }
+    }
+
+    /// A part of it, to be read by itself.
+    pub(crate) fn part(&self, at: Range<usize>) -> Self {
+        Self {
+            text: self.text.get(at.clone()).unwrap_or_default(),
+            whole: self.span(at.clone()),
+            start: self.start.map(|start| start + at.start),
         }
     }
 

@@ -1,9 +1,9 @@
 //! From tokens to operations in postfix order.
 
+use super::Written;
 use super::function::{FUNCTIONS, Function};
 use super::token::{Placed, Token, tokens};
-use super::Written;
-use crate::nearest::{listed, nearest, shown};
+use crate::nearest::{grouped, listed, nearest, shown};
 use crate::units::{Unit, Vocabulary};
 use crate::{Fault, limits};
 use std::ops::Range;
@@ -37,10 +37,12 @@ pub(crate) struct Expression {
 impl Expression {
     /// The sizes that it names, with their places.
     pub(crate) fn sizes(&self) -> impl Iterator<Item = (usize, Range<usize>)> {
-        self.operations.iter().filter_map(|(operation, at)| match operation {
-            Operation::Size(index) => Some((*index, at.clone())),
-            _ => None,
-        })
+        self.operations
+            .iter()
+            .filter_map(|(operation, at)| match operation {
+                Operation::Size(index) => Some((*index, at.clone())),
+                _ => None,
+            })
     }
 }
 
@@ -51,9 +53,6 @@ pub(crate) trait Names {
 
     /// All names, in the order of the file.
     fn all(&self) -> Vec<&str>;
-
-    /// True where a size may be missing only because the file could not be read.
-    fn incomplete(&self) -> bool;
 }
 
 /// An expression and what follows it: a tolerance, or nothing.
@@ -69,7 +68,8 @@ pub(crate) fn parse(
     vocabulary: Vocabulary,
     names: &dyn Names,
 ) -> Result<Expression, Fault> {
-    let Parsed { expression, rest } = parse_first(written, vocabulary, names)?;
+    let Parsed { expression, rest } =
+        parse_tokens(written, tokens_of(written)?, vocabulary, names)?;
     match rest.first() {
         None | Some(Placed { token: Token::End, .. }) => Ok(expression),
         Some(Placed { token: Token::PlusMinus, at }) => Err(Fault::new(
@@ -89,15 +89,6 @@ pub(crate) fn parse(
     }
 }
 
-/// Parses the expression at the beginning of the text, up to `+-` or `%`.
-pub(crate) fn parse_first<'e>(
-    written: &Written<'e>,
-    vocabulary: Vocabulary,
-    names: &dyn Names,
-) -> Result<Parsed<'e>, Fault> {
-    parse_tokens(written, tokens_of(written)?, vocabulary, names)
-}
-
 /// The tokens of `written`, if it is not too long.
 pub(crate) fn tokens_of<'e>(written: &Written<'e>) -> Result<Vec<Placed<'e>>, Fault> {
     if written.text.len() > limits::EXPRESSION {
@@ -105,7 +96,7 @@ pub(crate) fn tokens_of<'e>(written: &Written<'e>) -> Result<Vec<Placed<'e>>, Fa
             "limit::expression",
             format!(
                 "an expression of more than {} characters is not read",
-                limits::EXPRESSION
+                grouped(limits::EXPRESSION)
             ),
             written.whole(),
             "",
@@ -191,10 +182,7 @@ impl<'e> Parser<'_, 'e> {
     }
 
     /// One level of nesting deeper.
-    fn nested(
-        &mut self,
-        inner: impl FnOnce(&mut Self) -> Result<(), Fault>,
-    ) -> Result<(), Fault> {
+    fn nested(&mut self, inner: impl FnOnce(&mut Self) -> Result<(), Fault>) -> Result<(), Fault> {
         self.depth += 1;
         if self.depth > limits::PARENTHESES {
             return Err(self
@@ -336,12 +324,7 @@ impl<'e> Parser<'_, 'e> {
                 self.emit(Operation::Number(under), place);
                 self.emit(Operation::Divide, over);
             }
-        } else if let (
-            Token::Number(part),
-            Token::Over,
-            Token::Number(under),
-            Token::Word(word),
-        ) = (
+        } else if let (Token::Number(part), Token::Over, Token::Number(under), Token::Word(word)) = (
             self.token(),
             self.token_after(1),
             self.token_after(2),
@@ -388,7 +371,11 @@ impl<'e> Parser<'_, 'e> {
             };
             self.next += skip + 1;
             let next = self.unit_power(next)?;
-            let next = if inverse { next.power(-1.0) } else { Some(next) };
+            let next = if inverse {
+                next.power(-1.0)
+            } else {
+                Some(next)
+            };
             unit = match next {
                 Some(next) => unit.times(next),
                 None => return Err(self.absurd_power(at)),
@@ -430,7 +417,7 @@ impl<'e> Parser<'_, 'e> {
             let near = nearest(word, names.iter().copied());
             let all = listed(&names);
             return Err(match near {
-                Some(near) => fault.help(format!("did you mean {near}? Known are {all}")),
+                Some(near) => fault.help(format!("did you mean `{near}`? Known are {all}")),
                 None if self.names.index(word).is_some() => {
                     fault.help(format!("for a product write {word} * (…)"))
                 }
@@ -454,7 +441,7 @@ impl<'e> Parser<'_, 'e> {
             return Err(self
                 .fault(
                     "expression::arguments",
-                    format!("{} takes {takes}, and {count} are given", function.word()),
+                    format!("{} takes {takes}, not {count}", function.word()),
                     at,
                 )
                 .help("values are separated by commas: max(a, b)"));
@@ -568,11 +555,7 @@ impl<'e> Parser<'_, 'e> {
     fn unknown_unit(&self, word: &str, at: Range<usize>) -> Fault {
         if self.names.index(word).is_some() || self.token_after(1) == Token::Open {
             return self
-                .fault(
-                    "expression::operator",
-                    "a sign is missing before this",
-                    at,
-                )
+                .fault("expression::operator", "a sign is missing before this", at)
                 .help(format!("for a product write * {word}"));
         }
         if self.vocabulary == Vocabulary::Drawing
@@ -584,7 +567,10 @@ impl<'e> Parser<'_, 'e> {
                     format!("the unit {word} does not belong to a size of a drawing"),
                     at,
                 )
-                .help(format!("units here are {}", listed(Unit::words(self.vocabulary))));
+                .help(format!(
+                    "units here are {}",
+                    listed(Unit::words(self.vocabulary))
+                ));
         }
         let units = Unit::words(self.vocabulary);
         let all = listed(units);
@@ -610,7 +596,7 @@ impl<'e> Parser<'_, 'e> {
             at,
         )
         .help(match near {
-            Some(near) => format!("did you mean {near}? Units are {all}"),
+            Some(near) => format!("did you mean `{near}`? Units are {all}"),
             None => format!("units are {all}"),
         })
     }

@@ -82,7 +82,9 @@ pub(super) fn tokens<'e>(written: &Written<'e>) -> Result<Vec<Placed<'e>>, Fault
                     '[' | '{' => "parentheses are round: ( )",
                     '\'' | '"' => "inches are written in: 3/4 in",
                     ':' => "a division is written /",
-                    _ => "an expression has numbers, names of sizes, units, + - * / ^ and parentheses",
+                    _ => {
+                        "an expression has numbers, names of sizes, units, + - * / ^ and parentheses"
+                    }
                 };
                 return Err(wrong_sign(written, at..at + c.len_utf8(), advice));
             }
@@ -173,13 +175,34 @@ mod tests {
                 End
             ]
         );
-        assert_eq!(read("2e−1 m²"), [Number(2.0), Word("e"), Minus, Number(1.0), Word("m"), Power, Number(2.0), End]);
-        assert_eq!(read("8° ± 1"), [Number(8.0), Word("°"), PlusMinus, Number(1.0), End]);
+        assert_eq!(
+            read("2e−1 m²"),
+            [
+                Number(2.0),
+                Word("e"),
+                Minus,
+                Number(1.0),
+                Word("m"),
+                Power,
+                Number(2.0),
+                End
+            ]
+        );
+        assert_eq!(
+            read("8° ± 1"),
+            [Number(8.0), Word("°"), PlusMinus, Number(1.0), End]
+        );
     }
 
     #[test]
     fn what_means_nothing_is_refused() {
-        assert_eq!(tokens(&Written::typed("3 $ 4")).unwrap_err().labels[0].span, 2..3);
-        assert_eq!(tokens(&Written::typed("1e999")).unwrap_err().code, "expression::not_finite");
+        assert_eq!(
+            tokens(&Written::typed("3 $ 4")).unwrap_err().labels[0].span,
+            2..3
+        );
+        assert_eq!(
+            tokens(&Written::typed("1e999")).unwrap_err().code,
+            "expression::not_finite"
+        );
     }
 }

@@ -3,6 +3,7 @@
 use super::table::{Entry, Key, Origin, Table};
 use super::{Kind, List, Value, short};
 use crate::fault::Found;
+use crate::nearest::grouped;
 use crate::{Fault, Span, limits};
 
 /// The words of a key, `a.b.c`. Almost always one.
@@ -205,7 +206,7 @@ fn add<'t>(
         found.push(
             Fault::new(
                 "limit::keys",
-                format!("a table has more than {} keys", limits::KEYS),
+                format!("a table has more than {} keys", grouped(limits::KEYS)),
                 key.span,
                 "",
             )

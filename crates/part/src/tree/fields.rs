@@ -2,7 +2,7 @@
 
 use super::{Entry, Kind, Table, Value};
 use crate::fault::Found;
-use crate::nearest::{advice, shown};
+use crate::nearest::{listed, nearest, shown};
 use crate::{Fault, Span};
 
 /// The keys of one kind of table.
@@ -22,6 +22,8 @@ pub(crate) struct Fields<'a, 't> {
     table: &'a Table<'t>,
     keys: &'static Keys,
     span: Span,
+    /// Known keys that unknown ones were probably meant to be: they are not missing as well.
+    slips: Vec<&'static str>,
 }
 
 impl<'a, 't> Fields<'a, 't> {
@@ -47,18 +49,29 @@ impl<'a, 't> Fields<'a, 't> {
         keys: &'static Keys,
         found: &mut Found,
     ) -> Self {
+        let mut slips = Vec::new();
         for entry in &table.entries {
             if !keys.known.contains(&&*entry.key) {
-                found.push(unknown_key(entry, keys));
+                let meant = keys.meant_by(&entry.key);
+                slips.extend(meant.map(|(key, _)| key));
+                found.push(unknown_key(entry, keys, meant));
             }
         }
-        Self { table, keys, span }
+        Self {
+            table,
+            keys,
+            span,
+            slips,
+        }
     }
 
     /// The entry of `key`, if it is there.
     pub(crate) fn get(&self, key: &str) -> Option<&'a Entry<'t>> {
-        debug_assert!(self.keys.known.contains(&key), "{key} is not a known key");
-        self.table.get(key)
+        // An unknown key has been reported, and counts as left out.
+        self.keys
+            .known
+            .contains(&key)
+            .then(|| self.table.get(key))?
     }
 
     /// The first of `keys` that is there.
@@ -74,7 +87,7 @@ impl<'a, 't> Fields<'a, 't> {
         found: &mut Found,
     ) -> Option<&'a Entry<'t>> {
         let entry = self.get(key);
-        if entry.is_none() {
+        if entry.is_none() && !self.slipped(&[key]) {
             found.push(
                 Fault::new(
                     "table::missing_key",
@@ -88,42 +101,88 @@ impl<'a, 't> Fields<'a, 't> {
         entry
     }
 
+    /// True where one of `keys` was probably meant by an unknown key, which has been reported.
+    pub(crate) fn slipped(&self, keys: &[&str]) -> bool {
+        self.slips.iter().any(|slip| keys.contains(slip))
+    }
+
+    /// All entries, unknown ones too.
+    pub(crate) fn entries(&self) -> &'a [Entry<'t>] {
+        &self.table.entries
+    }
+
     /// Its place.
     pub(crate) fn span(&self) -> Span {
         self.span.clone()
     }
 }
 
-fn unknown_key(entry: &Entry<'_>, keys: &Keys) -> Fault {
+impl Keys {
+    /// The known key that people write `word` for, or that is nearest to it, and what to call it.
+    fn meant_by(&self, word: &str) -> Option<(&'static str, &'static str)> {
+        let meant = self
+            .meant
+            .iter()
+            .find(|(other, _)| word.eq_ignore_ascii_case(other));
+        if let Some(&(_, words)) = meant {
+            let quoted = words.split('`').nth(1).unwrap_or(words);
+            let key = quoted.split(' ').next().unwrap_or(quoted);
+            return Some((key, words));
+        }
+        let near = nearest(word, self.known.iter().copied())?;
+        Some((near, near))
+    }
+}
+
+fn unknown_key(entry: &Entry<'_>, keys: &Keys, meant: Option<(&str, &str)>) -> Fault {
     let key = shown(&entry.key);
-    let meant = keys
-        .meant
-        .iter()
-        .find(|(word, _)| entry.key.eq_ignore_ascii_case(word));
+    let all = listed(keys.known);
     let help = match meant {
-        Some((_, meant)) => format!("did you mean {meant}?"),
-        None => advice(&entry.key, keys.known),
+        Some((key, words)) if key == words => format!("did you mean `{key}`? Known here: {all}"),
+        Some((_, words)) => format!("did you mean {words}? Known here: {all}"),
+        None => format!("known here: {all}"),
     };
-    Fault::new(
-        "table::unknown_key",
-        format!("`{key}` is no key of {}", keys.table),
-        entry.key_span(),
-        "",
-    )
-    .help(help)
+    let (code, message) = if entry.value.has_header() {
+        (
+            "table::unknown_table",
+            format!("this program knows no table [{key}]"),
+        )
+    } else {
+        (
+            "table::unknown_key",
+            format!("`{key}` is no key of {}", keys.table),
+        )
+    };
+    Fault::new(code, message, entry.key_span(), "").help(help)
 }
 
 impl<'t> Value<'t> {
     /// Reports that this is not what `what` has to be, unless it has been reported as broken.
     pub(crate) fn expected(&self, what: &str, kind: &str, found: &mut Found) {
-        if !matches!(self.kind, Kind::Broken) {
-            found.push(Fault::new(
-                "table::wrong_type",
-                format!("{what} is {kind}, not {}", self.words()),
-                self.span(),
-                format!("{kind} is expected here"),
-            ));
+        if matches!(self.kind, Kind::Broken) {
+            return;
         }
+        let help = if kind.contains("quotes") && kind.contains("number") {
+            "write a number like 40, or an expression in quotes like \"mouth / 2\""
+        } else if kind.contains("quotes") {
+            "put it in quotes: \"..\""
+        } else if kind.contains("list") {
+            "a list stands in brackets: [ .. ]"
+        } else if kind.contains("table") {
+            "a table stands in braces, { .. }, or under a header of its own"
+        } else {
+            "write it without quotes or brackets"
+        };
+        let is = self.words();
+        found.push(
+            Fault::new(
+                "table::wrong_type",
+                format!("{what} is {kind}, not {is}"),
+                self.span(),
+                "",
+            )
+            .help(help),
+        );
     }
 
     /// The items of a list.

@@ -4,6 +4,7 @@ use super::assembly::{Assembly, KeyPath};
 use super::table::{Key, Origin, Table};
 use super::{Kind, List, Value};
 use crate::fault::Found;
+use crate::nearest::grouped;
 use crate::{Fault, Span, limits};
 use std::borrow::Cow;
 use toml_parser::Source;
@@ -208,7 +209,10 @@ impl<'t> Grammar<'t, '_> {
                 key.span.clone(),
                 "",
             );
-            fault = if key.name.bytes().all(|byte| byte.is_ascii_digit()) {
+            let more = self.key_goes_on(key.span.end);
+            fault = if let Some(more) = more {
+                fault.help(format!("a key is one word: {}_{more}", key.name))
+            } else if key.name.bytes().all(|byte| byte.is_ascii_digit()) {
                 fault.help("a decimal number is written with a point: 12.5")
             } else {
                 fault.help(format!("write {} = and its value", key.name))
@@ -219,6 +223,14 @@ impl<'t> Grammar<'t, '_> {
         self.next();
         self.spaces();
         self.value(depth)
+    }
+
+    /// The second word, where a key was written in two before its equals sign.
+    fn key_goes_on(&self, from: usize) -> Option<&'t str> {
+        let (word, _) = self.text[from..].split_once('=')?;
+        let word = word.trim_matches([' ', '\t']);
+        let plain = word.bytes().all(|byte| byte.is_ascii_alphanumeric());
+        (plain && !word.is_empty()).then_some(word)
     }
 
     /// After a header or a value nothing more stands on the line.
@@ -481,7 +493,7 @@ impl<'t> Grammar<'t, '_> {
         self.found.push(
             Fault::new(
                 "limit::values",
-                format!("the file has more than {} values", limits::VALUES),
+                format!("the file has more than {} values", grouped(limits::VALUES)),
                 span.clone(),
                 "the rest is not read",
             )
@@ -510,6 +522,11 @@ impl<'t> Grammar<'t, '_> {
     /// Skips to the next statement after the structure was lost.
     fn recover(&mut self) {
         self.damaged = true;
+        // A list that was not closed ends where the next statement begins.
+        if self.open > 0 && self.at_statement() {
+            self.open = 0;
+            return;
+        }
         loop {
             match self.token.kind() {
                 TokenKind::Eof => break,

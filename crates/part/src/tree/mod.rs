@@ -14,11 +14,12 @@ mod scalar;
 mod table;
 
 pub(crate) use fields::{Fields, Keys};
-pub(crate) use grammar::parse;
+pub(crate) use grammar::{Document, parse};
 pub(crate) use table::{Entry, Table};
 
 use crate::Span;
 use std::borrow::Cow;
+use table::Origin;
 
 /// A value and its place.
 #[derive(Debug)]
@@ -70,6 +71,15 @@ impl<'t> Value<'t> {
     /// Its place; of a table under a header, the header's.
     pub(crate) fn span(&self) -> Span {
         self.start as usize..self.end as usize
+    }
+
+    /// True for a table that a header opened, or several of them.
+    fn has_header(&self) -> bool {
+        match &self.kind {
+            Kind::Table(table) => matches!(table.origin, Origin::Header | Origin::Passed),
+            Kind::List(list) => list.of_tables,
+            _ => false,
+        }
     }
 
     /// What it is, in words.

@@ -12,6 +12,7 @@ mod dimension;
 mod expect;
 mod expression;
 mod fault;
+mod geometry;
 mod head;
 mod kind;
 mod limits;

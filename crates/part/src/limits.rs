@@ -27,6 +27,3 @@ pub(crate) const PARENTHESES: usize = 100;
 /// Metres of one length: a million kilometres. The fifth power of it, which a moment of inertia takes, is far from
 /// overflowing.
 pub(crate) const LENGTH: f64 = 1e9;
-
-/// Metres that a section measures at least: an atom's size. The fifth power of it is far from underflowing.
-pub(crate) const SECTION: f64 = 1e-10;

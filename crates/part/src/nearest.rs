@@ -56,7 +56,7 @@ pub(crate) fn grouped(count: usize) -> String {
     let digits = count.to_string();
     let mut grouped = String::new();
     for (at, digit) in digits.char_indices() {
-        if at > 0 && (digits.len() - at) % 3 == 0 {
+        if at > 0 && (digits.len() - at).is_multiple_of(3) {
             grouped.push(',');
         }
         grouped.push(digit);

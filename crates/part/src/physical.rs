@@ -74,44 +74,41 @@ impl<'r, 't> Reading<'r, 't> {
         }
         let (value, rest) = self.value(what, dimension, tokens, found)?;
         let mut rest = rest.into_iter();
-        match rest.next() {
-            Some(Placed {
-                token: Token::PlusMinus,
-                at,
-            }) => {
-                let tolerance: Vec<_> = rest.collect();
-                let deviation = self.deviation(what, dimension, value, tolerance, found)?;
-                if deviation < 0.0 {
-                    found.push(
-                        Fault::new(
-                            "expect::negative_tolerance",
-                            "a tolerance after +- has no sign",
-                            self.written.span(at.start..self.written.text.len()),
-                            "",
-                        )
-                        .help("write 12.4 kg +- 2 %"),
-                    );
-                    return None;
-                }
-                Some(Tolerated {
-                    value,
-                    lower: -deviation,
-                    upper: deviation,
-                })
-            }
-            _ => {
-                found.push(
-                    Fault::new(
-                        "expect::no_tolerance",
-                        format!("{what} has no tolerance, so nothing can be judged by it"),
-                        self.written.whole(),
-                        "",
-                    )
-                    .help("write how far it may be off: \"12.4 kg +- 2 %\", \"101 mm +- 1 mm\""),
-                );
-                None
-            }
+        let Some(Placed {
+            token: Token::PlusMinus,
+            at,
+        }) = rest.next()
+        else {
+            found.push(
+                Fault::new(
+                    "expect::no_tolerance",
+                    format!("{what} has no tolerance, so nothing can be judged by it"),
+                    self.written.whole(),
+                    "",
+                )
+                .help("write how far it may be off: \"12.4 kg +- 2 %\", \"101 mm +- 1 mm\""),
+            );
+            return None;
+        };
+        let tolerance: Vec<_> = rest.collect();
+        let deviation = self.deviation(what, dimension, value, tolerance, found)?;
+        if deviation < 0.0 {
+            found.push(
+                Fault::new(
+                    "expect::negative_tolerance",
+                    "a tolerance after +- has no sign",
+                    self.written.span(at.start..self.written.text.len()),
+                    "",
+                )
+                .help("write 12.4 kg +- 2 %"),
+            );
+            return None;
         }
+        Some(Tolerated {
+            value,
+            lower: -deviation,
+            upper: deviation,
+        })
     }
 
     /// The value at the beginning of `tokens` in SI units, and the tokens after it.

@@ -82,6 +82,10 @@ pub(crate) fn point(value: &Value<'_>, values: &Values<'_>, found: &mut Found) -
 }
 
 /// The one entry among `keys`; two are reported, and then there is no target.
+#[expect(
+    clippy::option_option,
+    reason = "given twice and left out are two things"
+)]
 fn one_of<'a, 't>(
     fields: &Fields<'a, 't>,
     keys: &[&str],

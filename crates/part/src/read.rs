@@ -1,6 +1,6 @@
 //! From the text of a part file to a [`Part`].
 
-use crate::body::{Draft, bodies};
+use crate::body::bodies;
 use crate::dimension::Dimension;
 use crate::expect::expectations;
 use crate::expression::{Failure, Names, Quantity, Scope, Written, evaluate, parse};
@@ -11,7 +11,7 @@ use crate::sizes::read_sizes;
 use crate::tree::{Document, Fields, Kind};
 use crate::units::Vocabulary;
 use crate::values::Values;
-use crate::{Fault, Faults, LengthUnit, Part, limits, tree};
+use crate::{Fault, Faults, LengthUnit, Part, geometry, limits, tree};
 
 /// The files beside a part file, for outlines that come from a file.
 ///
@@ -128,12 +128,12 @@ fn part(
     let (head, part) = head(&file, found);
     // Without a unit the rest is read all the same; there will be no part.
     let unit = head.unit.unwrap_or(LengthUnit::Millimetre);
-    let table = file.get("size").and_then(|entry| match &entry.value.kind {
-        Kind::Table(table) => Some((&**table, entry.value.span())),
-        _ => {
-            entry.value.expected("`size`", "a table [size]", found);
-            None
+    let table = file.get("size").and_then(|entry| {
+        if let Kind::Table(table) = &entry.value.kind {
+            return Some((&**table, entry.value.span()));
         }
+        entry.value.expected("`size`", "a table [size]", found);
+        None
     });
     let (sizes, named) = read_sizes(table, text, unit, settings, found);
     let values = Values { text, unit, sizes };
@@ -142,12 +142,13 @@ fn part(
         Some(entry) => materials(entry, &values, found),
         None => Materials::default(),
     };
-    let drafts = match file.get("body") {
-        Some(entry) => bodies(entry, &values, &materials, found),
-        None => {
+    let drafts = if let Some(entry) = file.get("body") {
+        bodies(entry, &values, &materials, found)
+    } else {
+        if !file.slipped(&["body"]) {
             found.push(no_body());
-            Vec::new()
         }
+        Vec::new()
     };
     let expect = match file.get("expect") {
         Some(entry) => expectations(entry, &values, found),
@@ -156,20 +157,20 @@ fn part(
     if damaged {
         found.drop_codes(&CONSEQUENCES);
     }
-    let bodies = build(&drafts, neighbours, found);
+    let bodies = geometry::bodies(drafts, unit, neighbours, found);
     if !found.is_empty() {
         return None;
     }
     let Head {
         name,
         number,
-        unit,
         general_tolerance,
+        ..
     } = head;
     Some(Part {
         name: name?,
         number,
-        unit: unit?,
+        unit,
         revolve: revolve?,
         general_tolerance,
         sizes: named,
@@ -183,11 +184,6 @@ fn no_body() -> Fault {
     Fault::new("part::no_body", "the part has no body", 0..0, "").help(
         "write [[body]] and under it a name, a material and an outline: outline = [ { d = 40, z = 0 }, { d = 60 }, { z = 12 } ]",
     )
-}
-
-fn build(drafts: &[Draft], neighbours: &dyn Neighbours, found: &mut Found) -> Vec<crate::Body> {
-    let _ = (drafts, neighbours, found);
-    Vec::new()
 }
 
 /// Sizes of a text that stands alone: none.

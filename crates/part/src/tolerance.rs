@@ -34,55 +34,52 @@ pub(crate) fn tolerance(
         }
     }
     let dimension = dimension?;
-    let (lower, upper) = match &value.kind {
-        Kind::List(_) => {
-            let items = value.list("`tol`", found)?;
-            let [lower, upper] = items else {
-                found.push(
-                    Fault::new(
-                        "tolerance::list",
-                        "a list of deviations has two: the lower and the upper",
-                        value.span(),
-                        "",
-                    )
-                    .help("write tol = [-0.5, 1.0]"),
-                );
-                return None;
-            };
-            let from = deviation(lower, dimension, values, found);
-            let to = deviation(upper, dimension, values, found);
-            let (from, to) = (from?, to?);
-            if from > to {
-                found.push(
-                    Fault::new(
-                        "tolerance::order",
-                        "the lower deviation is above the upper one",
-                        lower.span(),
-                        "the lower",
-                    )
-                    .also(upper.span(), "the upper")
-                    .help("the lower deviation stands first: [-0.5, 1.0]"),
-                );
-                return None;
-            }
-            (from, to)
+    let (lower, upper) = if let Kind::List(_) = &value.kind {
+        let items = value.list("`tol`", found)?;
+        let [lower, upper] = items else {
+            found.push(
+                Fault::new(
+                    "tolerance::list",
+                    "a list of deviations has two: the lower and the upper",
+                    value.span(),
+                    "",
+                )
+                .help("write tol = [-0.5, 1.0]"),
+            );
+            return None;
+        };
+        let from = deviation(lower, dimension, values, found);
+        let to = deviation(upper, dimension, values, found);
+        let (from, to) = (from?, to?);
+        if from > to {
+            found.push(
+                Fault::new(
+                    "tolerance::order",
+                    "the lower deviation is above the upper one",
+                    lower.span(),
+                    "the lower",
+                )
+                .also(upper.span(), "the upper")
+                .help("the lower deviation stands first: [-0.5, 1.0]"),
+            );
+            return None;
         }
-        _ => {
-            let both = deviation(value, dimension, values, found)?;
-            if both < 0.0 {
-                found.push(
-                    Fault::new(
-                        "tolerance::negative",
-                        "a tolerance to both sides is not negative",
-                        value.span(),
-                        "",
-                    )
-                    .help("write it without its sign, or lower and upper: [-0.5, 0]"),
-                );
-                return None;
-            }
-            (-both, both)
+        (from, to)
+    } else {
+        let both = deviation(value, dimension, values, found)?;
+        if both < 0.0 {
+            found.push(
+                Fault::new(
+                    "tolerance::negative",
+                    "a tolerance to both sides is not negative",
+                    value.span(),
+                    "",
+                )
+                .help("write it without its sign, or lower and upper: [-0.5, 0]"),
+            );
+            return None;
         }
+        (-both, both)
     };
     Some(Tolerance::Limits(lower, upper))
 }

@@ -14,11 +14,6 @@ pub(crate) struct Factor {
 }
 
 impl Factor {
-    pub(crate) const ONE: Self = Self {
-        over: 1.0,
-        under: 1.0,
-    };
-
     /// `value` times this.
     pub(crate) fn of(self, value: f64) -> f64 {
         value * self.over / self.under

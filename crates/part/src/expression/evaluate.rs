@@ -79,13 +79,13 @@ impl Scope<'_> {
     /// The bare number `quantity` as a quantity of `dimension`.
     pub(crate) fn adopt(&self, quantity: Quantity, dimension: Dimension) -> Quantity {
         Quantity {
-            value: self.from_bare(quantity.value, dimension),
+            value: self.in_system(quantity.value, dimension),
             dimension,
             made_of: quantity.made_of,
         }
     }
 
-    fn from_bare(&self, value: f64, dimension: Dimension) -> f64 {
+    fn in_system(&self, value: f64, dimension: Dimension) -> f64 {
         if self.bare == self.system {
             value
         } else {
@@ -145,7 +145,7 @@ impl Machine<'_> {
             Operation::Size(index) => {
                 let size = self.scope.sizes.get(index).copied().flatten();
                 let mut quantity = size.ok_or(Failure::Silent)?;
-                quantity.value = self.scope.from_bare(quantity.value, quantity.dimension);
+                quantity.value = self.scope.in_system(quantity.value, quantity.dimension);
                 Operand {
                     quantity,
                     at: at.clone(),

@@ -34,11 +34,6 @@ impl<'e> Written<'e> {
         Self::new(text, 0..text.len(), Some(0))
     }
 
-    /// A text that was typed elsewhere, for the value at `place`.
-    pub(crate) fn elsewhere(text: &'e str, place: Span) -> Self {
-        Self::new(text, place, None)
-    }
-
     /// Place of a part of it; of all of it where escapes hide the part.
     pub(crate) fn span(&self, at: Range<usize>) -> Span {
         match self.start {

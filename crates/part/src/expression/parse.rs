@@ -8,6 +8,9 @@ use crate::units::{Unit, Vocabulary};
 use crate::{Fault, limits};
 use std::ops::Range;
 
+/// Sizes that a message lists at most.
+const LISTED: usize = 12;
+
 /// One operation on the stack of values.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) enum Operation {
@@ -247,6 +250,23 @@ impl<'e> Parser<'_, 'e> {
 
     fn power(&mut self) -> Result<(), Fault> {
         self.primary(true)?;
+        self.raised()
+    }
+
+    /// What stands after `^`; powers of powers bind from the right.
+    fn exponent(&mut self) -> Result<(), Fault> {
+        if self.token() == Token::Minus {
+            let at = self.take();
+            self.nested(Self::exponent)?;
+            self.emit(Operation::Negate, at);
+            return Ok(());
+        }
+        self.primary(false)?;
+        self.raised()
+    }
+
+    /// `^` and what stands after it, if anything.
+    fn raised(&mut self) -> Result<(), Fault> {
         if self.token() != Token::Power {
             return Ok(());
         }
@@ -254,28 +274,6 @@ impl<'e> Parser<'_, 'e> {
         self.nested(Self::exponent)?;
         self.emit(Operation::Power, at);
         Ok(())
-    }
-
-    /// What stands after `^`; powers of powers bind from the right.
-    fn exponent(&mut self) -> Result<(), Fault> {
-        match self.token() {
-            Token::Minus => {
-                let at = self.take();
-                self.nested(Self::exponent)?;
-                self.emit(Operation::Negate, at);
-                Ok(())
-            }
-            _ => {
-                self.primary(false)?;
-                if self.token() != Token::Power {
-                    return Ok(());
-                }
-                let at = self.take();
-                self.nested(Self::exponent)?;
-                self.emit(Operation::Power, at);
-                Ok(())
-            }
-        }
     }
 
     fn primary(&mut self, fractions: bool) -> Result<(), Fault> {
@@ -534,7 +532,6 @@ impl<'e> Parser<'_, 'e> {
                 )
                 .help(format!("write {word}(…)"));
         }
-        const LISTED: usize = 12;
         let names = self.names.all();
         let fault = self.fault(
             "expression::unknown_size",

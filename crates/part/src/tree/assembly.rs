@@ -89,22 +89,21 @@ impl<'t> Assembly<'t> {
                 _ => return found.push(not_a_table(&key, first)),
             }
         }
-        let at = match table.position(&last.name) {
-            Some(at) => at,
-            None => {
-                let kind = if of_list {
-                    let items = Vec::new();
-                    let of_tables = true;
-                    Kind::List(Box::new(List { items, of_tables }))
-                } else {
-                    // `Passed` until its own header is entered below.
-                    Kind::Table(Box::new(Table::new(Origin::Passed)))
-                };
-                let value = Value::new(kind, span);
-                match add(table, last.clone(), value, found) {
-                    Some(at) => at,
-                    None => return,
-                }
+        let at = if let Some(at) = table.position(&last.name) {
+            at
+        } else {
+            let kind = if of_list {
+                let items = Vec::new();
+                let of_tables = true;
+                Kind::List(Box::new(List { items, of_tables }))
+            } else {
+                // `Passed` until its own header is entered below.
+                Kind::Table(Box::new(Table::new(Origin::Passed)))
+            };
+            let value = Value::new(kind, span);
+            match add(table, last.clone(), value, found) {
+                Some(at) => at,
+                None => return,
             }
         };
         let entry = &mut table.entries[at];

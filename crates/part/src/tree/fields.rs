@@ -33,12 +33,11 @@ impl<'a, 't> Fields<'a, 't> {
         keys: &'static Keys,
         found: &mut Found,
     ) -> Option<Self> {
-        match &value.kind {
-            Kind::Table(table) => Some(Self::of(table, value.span(), keys, found)),
-            _ => {
-                value.expected(keys.table, "a table", found);
-                None
-            }
+        if let Kind::Table(table) = &value.kind {
+            Some(Self::of(table, value.span(), keys, found))
+        } else {
+            value.expected(keys.table, "a table", found);
+            None
         }
     }
 
@@ -156,7 +155,7 @@ fn unknown_key(entry: &Entry<'_>, keys: &Keys, meant: Option<(&str, &str)>) -> F
     Fault::new(code, message, entry.key_span(), "").help(help)
 }
 
-impl<'t> Value<'t> {
+impl Value<'_> {
     /// Reports that this is not what `what` has to be, unless it has been reported as broken.
     pub(crate) fn expected(&self, what: &str, kind: &str, found: &mut Found) {
         if matches!(self.kind, Kind::Broken) {
@@ -187,23 +186,21 @@ impl<'t> Value<'t> {
 
     /// The items of a list.
     pub(crate) fn list(&self, what: &str, found: &mut Found) -> Option<&[Self]> {
-        match &self.kind {
-            Kind::List(list) => Some(&list.items),
-            _ => {
-                self.expected(what, "a list [..]", found);
-                None
-            }
+        if let Kind::List(list) = &self.kind {
+            Some(&list.items)
+        } else {
+            self.expected(what, "a list [..]", found);
+            None
         }
     }
 
     /// True or false.
     pub(crate) fn boolean(&self, what: &str, found: &mut Found) -> Option<bool> {
-        match self.kind {
-            Kind::Boolean(value) => Some(value),
-            _ => {
-                self.expected(what, "true or false", found);
-                None
-            }
+        if let Kind::Boolean(value) = self.kind {
+            Some(value)
+        } else {
+            self.expected(what, "true or false", found);
+            None
         }
     }
 

@@ -187,15 +187,15 @@ fn not_a_value(written: &str, span: &Span) -> Fault {
             if value.is_empty() { "0" } else { value }
         ));
     }
-    if let Some((whole, fraction)) = unsigned.split_once('.') {
-        if (digits(whole) && fraction.is_empty()) || (whole.is_empty() && digits(fraction)) {
-            let or_zero = |part: &str| if part.is_empty() { "0" } else { part }.to_owned();
-            return fault("a decimal number has digits before and after its point").help(format!(
-                "write {}.{}",
-                or_zero(whole),
-                or_zero(fraction)
-            ));
-        }
+    if let Some((whole, fraction)) = unsigned.split_once('.')
+        && ((digits(whole) && fraction.is_empty()) || (whole.is_empty() && digits(fraction)))
+    {
+        let or_zero = |part: &str| if part.is_empty() { "0" } else { part }.to_owned();
+        return fault("a decimal number has digits before and after its point").help(format!(
+            "write {}.{}",
+            or_zero(whole),
+            or_zero(fraction)
+        ));
     }
     if written.eq_ignore_ascii_case("true") || written.eq_ignore_ascii_case("false") {
         return Fault::new(

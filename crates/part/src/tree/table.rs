@@ -53,11 +53,18 @@ pub(super) enum Origin {
     Inline,
 }
 
+/// Positions of keys among the entries.
+#[derive(Debug)]
+struct Index<'t> {
+    positions: HashMap<Cow<'t, str>, usize>,
+}
+
 /// Keys and values.
 #[derive(Debug)]
 pub(crate) struct Table<'t> {
     pub(crate) entries: Vec<Entry<'t>>,
-    index: Option<Box<HashMap<Cow<'t, str>, usize>>>,
+    /// Position of each key, once there are many. Behind a pointer, as most tables have none.
+    index: Option<Box<Index<'t>>>,
     pub(super) origin: Origin,
 }
 
@@ -73,7 +80,7 @@ impl<'t> Table<'t> {
     /// Where `key` is among the entries.
     pub(super) fn position(&self, key: &str) -> Option<usize> {
         match &self.index {
-            Some(index) => index.get(key).copied(),
+            Some(index) => index.positions.get(key).copied(),
             None => self.entries.iter().position(|entry| entry.key == key),
         }
     }
@@ -87,14 +94,13 @@ impl<'t> Table<'t> {
     pub(super) fn push(&mut self, entry: Entry<'t>) -> usize {
         let at = self.entries.len();
         if let Some(index) = &mut self.index {
-            index.insert(entry.key.clone(), at);
+            index.positions.insert(entry.key.clone(), at);
         }
         self.entries.push(entry);
         if self.index.is_none() && self.entries.len() > SEARCHED {
             let keys = self.entries.iter().enumerate();
-            self.index = Some(Box::new(
-                keys.map(|(at, entry)| (entry.key.clone(), at)).collect(),
-            ));
+            let positions = keys.map(|(at, entry)| (entry.key.clone(), at)).collect();
+            self.index = Some(Box::new(Index { positions }));
         }
         at
     }

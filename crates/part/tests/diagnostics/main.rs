@@ -39,7 +39,7 @@ fn cases(text: &str) -> Vec<Case> {
     text.split("=== ")
         .skip(1)
         .map(|case| {
-            let (title, rest) = case.split_once('\n').unwrap();
+            let (title, rest) = case.split_once('\n').expect("a title is a line");
             let (piece, shown) = rest.split_once("\n---\n").unwrap_or((rest, ""));
             Case {
                 title: title.to_owned(),
@@ -64,7 +64,9 @@ fn drawn(faults: &Faults) -> String {
     let handler = GraphicalReportHandler::new_themed(GraphicalTheme::unicode_nocolor());
     let mut out = String::new();
     for diagnostic in faults.diagnostics() {
-        handler.render_report(&mut out, diagnostic).unwrap();
+        handler
+            .render_report(&mut out, diagnostic)
+            .expect("a report is drawn into memory");
         out.push('\n');
     }
     let lines: Vec<&str> = out.lines().map(str::trim_end).collect();
@@ -73,8 +75,8 @@ fn drawn(faults: &Faults) -> String {
 
 fn files() -> Vec<PathBuf> {
     let mut files: Vec<PathBuf> = std::fs::read_dir(folder())
-        .unwrap()
-        .map(|entry| entry.unwrap().path())
+        .expect("the cases are there")
+        .map(|entry| entry.expect("the folder can be read").path())
         .collect();
     files.sort();
     files

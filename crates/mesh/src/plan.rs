@@ -1,0 +1,496 @@
+//! A body as rings: which circles the mesh stands on and how many segments each has, before a triangle is made.
+
+use crate::meridian::{Division, Node, divide};
+use crate::ring::{Circle, area_true, segments};
+use crate::{MeshError, Options, Placement};
+use profile::{DVec2, Edge, Loop, Region, trig};
+use std::f64::consts::TAU;
+
+/// A ring of the mesh, or a point of it on the axis.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(crate) struct Station {
+    /// Radius of the ring's corners, metres; 0 for a point on the axis.
+    pub(crate) radius: f64,
+    /// Where along the axis, metres.
+    pub(crate) z: f64,
+    /// Segments over the part's angle; 0 for a point on the axis.
+    pub(crate) segments: u32,
+    /// Radius of the circle that the ring stands for.
+    pub(crate) circle: f64,
+    /// The edge (index in its loop) of the band from this station to the next.
+    pub(crate) edge: u32,
+}
+
+impl Station {
+    /// True for a point on the axis.
+    pub(crate) fn is_pole(self) -> bool {
+        self.segments == 0
+    }
+}
+
+/// The stations of one loop in order of travel, closed.
+#[derive(Debug, Clone)]
+pub(crate) struct LoopPlan {
+    pub(crate) stations: Vec<Station>,
+    /// Chain's moment ∬ r dA less the edge's, one an edge, m3 a radian.
+    pub(crate) meridional: Vec<f64>,
+}
+
+impl LoopPlan {
+    /// The bands: pairs of neighbouring stations of which at most one is on the axis.
+    pub(crate) fn bands(&self) -> impl Iterator<Item = (Station, Station)> {
+        let following = self.stations.iter().cycle().skip(1);
+        self.stations
+            .iter()
+            .zip(following)
+            .filter(|(a, b)| !(a.is_pole() && b.is_pole()))
+            .map(|(a, b)| (*a, *b))
+    }
+}
+
+/// One body as rings.
+#[derive(Debug, Clone)]
+pub(crate) struct BodyPlan {
+    pub(crate) loops: Vec<LoopPlan>,
+    /// Bound on the distance between mesh and true surface, both ways, metres.
+    pub(crate) deviation: f64,
+}
+
+impl BodyPlan {
+    /// Triangles that the plan leads to, end caps included.
+    pub(crate) fn triangles(&self, angle: f64) -> u64 {
+        let bands: u64 = self
+            .loops
+            .iter()
+            .flat_map(LoopPlan::bands)
+            .map(|(a, b)| u64::from(a.segments) + u64::from(b.segments))
+            .sum();
+        if angle == TAU {
+            bands
+        } else {
+            // A polygon of n corners and h holes has n + 2h - 2 triangles.
+            let corners: usize = self.loops.iter().map(|l| l.stations.len()).sum();
+            bands + 2 * (corners + 2 * (self.loops.len() - 1) - 2) as u64
+        }
+    }
+}
+
+/// A node of the chain with what the ring on it has to answer for.
+#[derive(Debug, Clone, Copy)]
+struct Corner {
+    at: DVec2,
+    circle: Circle,
+    /// Meridional distance already spent on either side.
+    spent: f64,
+    edge: u32,
+}
+
+/// Cosine of the angle between two faces' normals above which the profile counts as running on smoothly: 0.08 degrees.
+const SMOOTH: f64 = 1.0 - 1e-6;
+
+/// Plans one body.
+///
+/// `volume`: what the body's mesh shall enclose, m3, for the volume-true placement.
+///
+/// # Errors
+/// More triangles than allowed; faces closer than a mesh of allowed size keeps apart.
+pub(crate) fn body(
+    region: &Region,
+    angle: f64,
+    volume: f64,
+    options: &Options,
+) -> Result<BodyPlan, MeshError> {
+    let extent = region
+        .bounds()
+        .size()
+        .max_element()
+        .max(region.bounds().max.x);
+    if !(options.within.is_finite() && options.within >= LEAST_WITHIN * extent) {
+        return Err(MeshError::Within);
+    }
+    // The part's own extent is bound enough: beyond it the plainest mesh is made.
+    let mut within = options.within.min(extent);
+    loop {
+        let plan = body_within(region, angle, volume, options, within)?;
+        match crate::clearance::first_conflict(&plan) {
+            None => return Ok(plan),
+            // Finer until every face keeps clear of the others.
+            Some(_) if within > options.within * LEAST_SHARE && within > LEAST_WITHIN * extent => {
+                within *= 0.5
+            }
+            Some(place) => {
+                return Err(MeshError::TooThin {
+                    r: place.x,
+                    z: place.y,
+                });
+            }
+        }
+    }
+}
+
+/// Below this share of the part's extent f64 cannot tell mesh and surface apart.
+const LEAST_WITHIN: f64 = 1e-12;
+/// How much finer than asked a mesh may be made to keep thin walls apart.
+const LEAST_SHARE: f64 = 1e-6;
+
+fn body_within(
+    region: &Region,
+    angle: f64,
+    volume: f64,
+    options: &Options,
+    within: f64,
+) -> Result<BodyPlan, MeshError> {
+    // A part of the bound is kept for the last correction; it is rarely touched.
+    let mut reserve = 0.03;
+    loop {
+        let share = if options.placement == Placement::VolumeTrue {
+            within * (1.0 - reserve)
+        } else {
+            within
+        };
+        let chains = region
+            .loops()
+            .map(|l| corners(l, angle, options, share))
+            .collect::<Result<Vec<_>, _>>()?;
+        let plan = match options.placement {
+            Placement::VolumeTrue => area_true_rings(&chains, angle, volume, options, share),
+            Placement::Inscribed | Placement::Circumscribed => {
+                one_sided_rings(&chains, angle, options, within)?
+            }
+        };
+        if plan.deviation <= within || reserve > 0.7 {
+            let triangles = plan.triangles(angle);
+            if triangles > options.most_triangles {
+                return Err(MeshError::TooMany {
+                    triangles,
+                    allowed: options.most_triangles,
+                });
+            }
+            return Ok(plan);
+        }
+        reserve += 0.1;
+    }
+}
+
+/// One loop's corners, and its chains' moment errors.
+struct Outline {
+    corners: Vec<Corner>,
+    meridional: Vec<f64>,
+}
+
+/// Divides the edges of a loop.
+fn corners(
+    outline: &Loop,
+    angle: f64,
+    options: &Options,
+    within: f64,
+) -> Result<Outline, MeshError> {
+    let on_axis =
+        |edge: &Edge| edge.start().x == 0.0 && edge.end().x == 0.0 && matches!(edge, Edge::Line(_));
+    let division = Division {
+        within: 0.5 * within,
+        placement: options.placement,
+        greatest_turn: TAU / f64::from(options.least_segments.get()),
+        greatest_chord: options
+            .greatest_edge
+            .map_or(f64::INFINITY, |edge| edge * std::f64::consts::FRAC_1_SQRT_2),
+        // Fewer rings than this many are always allowed; more would break the limit on triangles whatever their counts.
+        most_pieces: options.most_triangles / u64::from(options.least_segments.get().max(3)) + 2,
+    };
+    let _ = angle;
+    let edges = outline.edges();
+    let chains = edges
+        .iter()
+        .map(|edge| {
+            if on_axis(edge) {
+                Ok(None)
+            } else {
+                divide(edge, &division).map(Some)
+            }
+        })
+        .collect::<Result<Vec<_>, _>>()?;
+    let mut found = Outline {
+        corners: Vec::new(),
+        meridional: Vec::new(),
+    };
+    for (i, edge) in edges.iter().enumerate() {
+        let before = if i == 0 { edges.len() - 1 } else { i - 1 };
+        let spent_before = chains[before].as_ref().map_or(0.0, |chain| chain.deviation);
+        let number = u32::try_from(i).unwrap_or(u32::MAX);
+        let Some(chain) = &chains[i] else {
+            found.corners.push(Corner {
+                at: edge.start(),
+                circle: AXIS,
+                spent: spent_before,
+                edge: number,
+            });
+            found.meridional.push(0.0);
+            continue;
+        };
+        for (j, node) in chain.nodes.iter().enumerate() {
+            let (circle, spent) = if j == 0 {
+                let arriving = -profile::left_of(edges[before].tangent(1.0));
+                (
+                    circle_at(node, Some(arriving), edges[before].curvature(1.0)),
+                    spent_before.max(chain.deviation),
+                )
+            } else {
+                (circle_at(node, None, 0.0), chain.deviation)
+            };
+            found.corners.push(Corner {
+                at: node.at,
+                circle,
+                spent,
+                edge: number,
+            });
+        }
+        found.meridional.push(chain.moment_excess);
+    }
+    Ok(found)
+}
+
+/// A point on the axis.
+const AXIS: Circle = Circle {
+    radius: 0.0,
+    facing: 1.0,
+    curvature: 0.0,
+};
+
+/// What the ring on a node has to answer for; `arriving` is the normal of the edge before, at an edge's start.
+fn circle_at(node: &Node, arriving: Option<DVec2>, arriving_curvature: f64) -> Circle {
+    let radius = node.at.x;
+    match arriving {
+        Some(normal) if normal.dot(node.normal) < SMOOTH => Circle {
+            radius,
+            facing: 1.0,
+            curvature: 0.0,
+        },
+        Some(normal) => {
+            let other = arriving_curvature.abs();
+            Circle {
+                radius,
+                facing: node.normal.x.abs().max(normal.x.abs()),
+                curvature: node
+                    .curvature
+                    .max(if other.is_finite() { other } else { 0.0 }),
+            }
+        }
+        None => Circle {
+            radius,
+            facing: node.normal.x.abs(),
+            curvature: node.curvature,
+        },
+    }
+}
+
+/// Count of a ring whose circle may be missed by `within`.
+fn count(
+    circle: Circle,
+    angle: f64,
+    options: &Options,
+    within: f64,
+    excess: impl Fn(f64) -> f64,
+) -> u32 {
+    let least = options.least_segments.get();
+    let by_length = options.greatest_edge.map_or(0.0, |edge| {
+        circle.radius * TAU / (edge * std::f64::consts::FRAC_1_SQRT_2)
+    });
+    #[expect(
+        clippy::cast_possible_truncation,
+        clippy::cast_sign_loss,
+        reason = "clamped to the range of u32"
+    )]
+    let least = least.max(by_length.ceil().clamp(0.0, 4e8) as u32);
+    segments(circle, angle, least, within, excess)
+}
+
+fn area_true_rings(
+    chains: &[Outline],
+    angle: f64,
+    volume: f64,
+    options: &Options,
+    within: f64,
+) -> BodyPlan {
+    let mut deviation = 0.0_f64;
+    let mut loops: Vec<LoopPlan> = chains
+        .iter()
+        .map(|outline| {
+            let stations = outline.corners.iter().map(|corner| {
+                let excess = |step: f64| area_true(step) - 1.0;
+                if corner.at.x <= 0.0 {
+                    return pole(corner);
+                }
+                let segments = count(corner.circle, angle, options, within - corner.spent, excess);
+                let factor = area_true(angle / f64::from(segments));
+                let off = corner.spent + corner.circle.cost((factor - 1.0) * corner.at.x);
+                deviation = deviation.max(off);
+                Station {
+                    radius: factor * corner.at.x,
+                    z: corner.at.y,
+                    segments,
+                    circle: corner.at.x,
+                    edge: corner.edge,
+                }
+            });
+            LoopPlan {
+                stations: stations.collect(),
+                meridional: outline.meridional.clone(),
+            }
+        })
+        .collect();
+    let moved = crate::correction::close_volume(&mut loops, angle, volume);
+    BodyPlan {
+        loops,
+        deviation: deviation + moved,
+    }
+}
+
+fn pole(corner: &Corner) -> Station {
+    Station {
+        radius: 0.0,
+        z: corner.at.y,
+        segments: 0,
+        circle: 0.0,
+        edge: corner.edge,
+    }
+}
+
+/// Which way a band faces: away from the axis, towards it, or along it.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+enum Facing {
+    Outward,
+    Inward,
+    Along,
+}
+
+fn facing(from: DVec2, to: DVec2) -> Facing {
+    // The outward normal of the travel (dr, dz) is (dz, -dr).
+    match (to.y - from.y).partial_cmp(&0.0) {
+        Some(std::cmp::Ordering::Greater) => Facing::Outward,
+        Some(std::cmp::Ordering::Less) => Facing::Inward,
+        _ => Facing::Along,
+    }
+}
+
+/// Rings of one count for the whole body. With corners at the radius r the polygon is inside the circle, at r / cos(t/2)
+/// outside; outward faces get the one, inward faces the other, so that the solid between them is on the same side
+/// everywhere. Where two such faces meet in a lip, the ring stands where the two displaced faces meet.
+fn one_sided_rings(
+    chains: &[Outline],
+    angle: f64,
+    options: &Options,
+    within: f64,
+) -> Result<BodyPlan, MeshError> {
+    let outer_grows = options.placement == Placement::Circumscribed;
+    let excess = |step: f64| 1.0 / trig::cos(0.5 * step) - 1.0;
+    let mut segments = chains
+        .iter()
+        .flat_map(|outline| &outline.corners)
+        .filter(|corner| corner.at.x > 0.0)
+        .map(|corner| count(corner.circle, angle, options, within - corner.spent, excess))
+        .max()
+        .unwrap_or(3);
+    loop {
+        let grown = 1.0 + excess(angle / f64::from(segments));
+        let factor = |facing: Facing| {
+            if (facing == Facing::Outward) == outer_grows {
+                grown
+            } else {
+                1.0
+            }
+        };
+        let mut deviation = 0.0_f64;
+        let loops: Vec<LoopPlan> = chains
+            .iter()
+            .map(|outline| {
+                let (stations, off) = one_sided_stations(&outline.corners, segments, grown, factor);
+                deviation = deviation.max(off);
+                LoopPlan {
+                    stations,
+                    meridional: outline.meridional.clone(),
+                }
+            })
+            .collect();
+        if deviation <= within {
+            return Ok(BodyPlan { loops, deviation });
+        }
+        let more = segments / 8 + 4;
+        segments = if angle == TAU {
+            segments + more / 4 * 4
+        } else {
+            segments + more
+        };
+        if u64::from(segments) > options.most_triangles {
+            return Err(MeshError::TooMany {
+                triangles: u64::from(segments),
+                allowed: options.most_triangles,
+            });
+        }
+    }
+}
+
+fn one_sided_stations(
+    corners: &[Corner],
+    segments: u32,
+    grown: f64,
+    factor: impl Fn(Facing) -> f64,
+) -> (Vec<Station>, f64) {
+    let count = corners.len();
+    let mut deviation = 0.0_f64;
+    let stations = (0..count)
+        .map(|i| {
+            let [before, corner, after] = [
+                &corners[(i + count - 1) % count],
+                &corners[i],
+                &corners[(i + 1) % count],
+            ];
+            if corner.at.x <= 0.0 {
+                return pole(corner);
+            }
+            let (arriving, leaving) = (facing(before.at, corner.at), facing(corner.at, after.at));
+            let is_lip = matches!(
+                (arriving, leaving),
+                (Facing::Outward, Facing::Inward) | (Facing::Inward, Facing::Outward)
+            );
+            let scaled = |p: DVec2, by: f64| DVec2::new(p.x * by, p.y);
+            let at = if is_lip {
+                let (f, g) = (factor(arriving), factor(leaving));
+                let (p, u) = (
+                    scaled(corner.at, f),
+                    scaled(corner.at, f) - scaled(before.at, f),
+                );
+                let (q, v) = (
+                    scaled(corner.at, g),
+                    scaled(after.at, g) - scaled(corner.at, g),
+                );
+                let turned = u.perp_dot(v);
+                if turned == 0.0 {
+                    p
+                } else {
+                    p + u * ((q - p).perp_dot(v) / turned)
+                }
+            } else {
+                let facing = if arriving == Facing::Along {
+                    leaving
+                } else {
+                    arriving
+                };
+                scaled(corner.at, factor(facing))
+            };
+            let off = if is_lip {
+                at.distance(corner.at) + (grown - 1.0) * corner.at.x
+            } else {
+                corner.circle.cost((grown - 1.0) * corner.at.x)
+            };
+            deviation = deviation.max(corner.spent + off);
+            Station {
+                radius: at.x,
+                z: at.y,
+                segments,
+                circle: corner.at.x,
+                edge: corner.edge,
+            }
+        })
+        .collect();
+    (stations, deviation)
+}

@@ -38,8 +38,8 @@ pub(crate) fn first_conflict(plan: &BodyPlan) -> Option<DVec2> {
                     loop_index,
                     index,
                     count,
-                    from: DVec2::new(a.circle, a.z),
-                    to: DVec2::new(b.circle, b.z),
+                    from: a.node,
+                    to: b.node,
                 })
             })
         })

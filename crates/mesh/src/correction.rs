@@ -5,8 +5,8 @@
 use crate::plan::{LoopPlan, Station};
 use crate::predict::Patterns;
 
-/// Moves the rings so that the loops enclose `volume` (m3); returns the largest radial move, metres.
-pub(crate) fn close_volume(loops: &mut [LoopPlan], angle: f64, volume: f64) -> f64 {
+/// Moves the rings so that the loops enclose `volume` (m3), as nearly as moves of the size of their own excess can.
+pub(crate) fn close_volume(loops: &mut [LoopPlan], angle: f64, volume: f64) {
     let mut patterns = Patterns::new(angle);
     let plain: Vec<LoopPlan> = loops.to_vec();
     let moves: Vec<Vec<f64>> = plain.iter().map(|l| moves(&l.stations, angle)).collect();
@@ -37,11 +37,6 @@ pub(crate) fn close_volume(loops: &mut [LoopPlan], angle: f64, volume: f64) -> f
         (low, at_low, high) = (high, at_high, next);
     }
     excess_at(high, loops);
-    let largest = moves
-        .iter()
-        .flatten()
-        .fold(0.0_f64, |most, m| most.max(m.abs()));
-    high.abs() * largest
 }
 
 /// Relative difference at which the volume counts as closed: a hundred times finer than is promised.
@@ -63,7 +58,7 @@ fn moves(stations: &[Station], angle: f64) -> Vec<f64> {
             let step = angle / f64::from(ring.segments);
             let outward = after.z - before.z;
             let side = if outward < 0.0 { -1.0 } else { 1.0 };
-            side * ring.circle * step * step / 12.0
+            side * ring.node.x * step * step / 12.0
         })
         .collect()
 }

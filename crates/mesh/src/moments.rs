@@ -6,7 +6,7 @@ use std::f64::consts::TAU;
 use std::ops::AddAssign;
 
 /// ∫ dV, ∫ x dV and ∫ x xᵀ dV of what oriented triangles enclose with the origin.
-#[derive(Debug, Clone, Copy, Default, PartialEq)]
+#[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Moments {
     /// Volume, m3.
     pub volume: f64,
@@ -14,6 +14,17 @@ pub struct Moments {
     pub first: DVec3,
     /// Second moments ∫ x xᵀ dV, m5, symmetric.
     pub second: DMat3,
+}
+
+impl Default for Moments {
+    /// Nothing. (A matrix of glam's defaults to the identity.)
+    fn default() -> Self {
+        Self {
+            volume: 0.0,
+            first: DVec3::ZERO,
+            second: DMat3::ZERO,
+        }
+    }
 }
 
 impl AddAssign for Moments {

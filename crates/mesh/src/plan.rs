@@ -15,13 +15,22 @@ pub(crate) struct Station {
     pub(crate) z: f64,
     /// Segments over the part's angle; 0 for a point on the axis.
     pub(crate) segments: u32,
-    /// Radius of the circle that the ring stands for.
-    pub(crate) circle: f64,
+    /// The node of the chain that the ring stands for, r and z: a circle that its polygon replaces.
+    pub(crate) node: DVec2,
+    /// What the ring answers for.
+    pub(crate) circle: Circle,
+    /// Meridional distance already spent on either side, metres.
+    pub(crate) spent: f64,
     /// The edge (index in its loop) of the band from this station to the next.
     pub(crate) edge: u32,
 }
 
 impl Station {
+    /// Bound on the distance of the bands about this ring from the true surface.
+    fn deviation(self) -> f64 {
+        self.spent + self.circle.cost((self.radius - self.node.x).abs())
+    }
+
     /// True for a point on the axis.
     pub(crate) fn is_pole(self) -> bool {
         self.segments == 0
@@ -311,26 +320,19 @@ fn area_true_rings(
     options: &Options,
     within: f64,
 ) -> BodyPlan {
-    let mut deviation = 0.0_f64;
+    let excess = |step: f64| area_true(step) - 1.0;
     let mut loops: Vec<LoopPlan> = chains
         .iter()
         .map(|outline| {
             let stations = outline.corners.iter().map(|corner| {
-                let excess = |step: f64| area_true(step) - 1.0;
                 if corner.at.x <= 0.0 {
                     return pole(corner);
                 }
                 let segments = count(corner.circle, angle, options, within - corner.spent, excess);
-                let factor = area_true(angle / f64::from(segments));
-                let off = corner.spent + corner.circle.cost((factor - 1.0) * corner.at.x);
-                deviation = deviation.max(off);
-                Station {
-                    radius: factor * corner.at.x,
-                    z: corner.at.y,
+                corner.ring(
                     segments,
-                    circle: corner.at.x,
-                    edge: corner.edge,
-                }
+                    corner.at * DVec2::new(area_true(angle / f64::from(segments)), 1.0),
+                )
             });
             LoopPlan {
                 stations: stations.collect(),
@@ -338,21 +340,29 @@ fn area_true_rings(
             }
         })
         .collect();
-    let moved = crate::correction::close_volume(&mut loops, angle, volume);
-    BodyPlan {
-        loops,
-        deviation: deviation + moved,
+    crate::correction::close_volume(&mut loops, angle, volume);
+    let stations = || loops.iter().flat_map(|l| &l.stations);
+    let deviation = stations().fold(0.0, |most: f64, station| most.max(station.deviation()));
+    BodyPlan { loops, deviation }
+}
+
+impl Corner {
+    /// The ring on this corner, its own corners at `at`.
+    fn ring(&self, segments: u32, at: DVec2) -> Station {
+        Station {
+            radius: at.x,
+            z: at.y,
+            segments,
+            node: self.at,
+            circle: self.circle,
+            spent: self.spent,
+            edge: self.edge,
+        }
     }
 }
 
 fn pole(corner: &Corner) -> Station {
-    Station {
-        radius: 0.0,
-        z: corner.at.y,
-        segments: 0,
-        circle: 0.0,
-        edge: corner.edge,
-    }
+    corner.ring(0, DVec2::new(0.0, corner.at.y))
 }
 
 /// Which way a band faces: away from the axis, towards it, or along it.
@@ -483,13 +493,7 @@ fn one_sided_stations(
                 corner.circle.cost((grown - 1.0) * corner.at.x)
             };
             deviation = deviation.max(corner.spent + off);
-            Station {
-                radius: at.x,
-                z: at.y,
-                segments,
-                circle: corner.at.x,
-                edge: corner.edge,
-            }
+            corner.ring(segments, at)
         })
         .collect();
     (stations, deviation)

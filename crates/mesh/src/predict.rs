@@ -140,8 +140,8 @@ pub(crate) fn differences(loops: &[LoopPlan], angle: f64) -> Vec<EdgeDifference>
         );
         for (a, b) in outline.bands() {
             let facets = patterns.band(a.radius, a.segments, b.radius, b.segments) * (b.z - a.z);
-            let (p, q) = (a.circle, b.circle);
-            let circles = angle * (p * p + p * q + q * q) / 6.0 * (b.z - a.z);
+            let (p, q) = (a.node.x, b.node.x);
+            let circles = angle * (p * p + p * q + q * q) / 6.0 * (b.node.y - a.node.y);
             if let Some(edge) = found.get_mut(first + a.edge as usize) {
                 edge.circumferential += facets - circles;
             }

@@ -19,7 +19,7 @@ use profile::trig;
 use std::f64::consts::TAU;
 
 /// What is known of a ring before its segments are counted.
-#[derive(Debug, Clone, Copy)]
+#[derive(Debug, Clone, Copy, PartialEq)]
 pub(crate) struct Circle {
     /// Radius of the true circle, metres.
     pub(crate) radius: f64,

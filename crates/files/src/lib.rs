@@ -4,4 +4,4 @@ mod atomic;
 mod stl;
 
 pub use atomic::write_whole;
-pub use stl::{Header, StlError, read_stl, write_stl};
+pub use stl::{Header, StlError, read_stl, rounded, write_stl};

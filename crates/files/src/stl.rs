@@ -4,7 +4,6 @@
 //! begins with `solid`, which readers take for the text form.
 
 use glam::DVec3;
-use std::collections::HashMap;
 use std::io::{self, Read, Seek, Write};
 
 /// What the header of a binary STL says.
@@ -110,32 +109,72 @@ impl<W: Write> Write for Headed<'_, W> {
     }
 }
 
-/// Reads a binary STL that this program wrote: corners that are equal bit for bit become one. Metres, with `unit` metres a
-/// number of the file.
+/// Reads an STL that this program wrote, facet by facet in the file's order: corners in metres, with `unit` metres a number of
+/// the file.
 ///
 /// # Errors
 /// See [`StlError`].
-pub fn read_stl(
-    reader: &mut (impl Read + Seek),
-    unit: f64,
-) -> Result<(Vec<DVec3>, Vec<[u32; 3]>), StlError> {
-    let mut positions = Vec::new();
-    let mut triangles = Vec::new();
-    let mut numbers: HashMap<[u32; 3], u32> = HashMap::new();
-    for (index, facet) in stl_io::create_stl_reader(reader)?.enumerate() {
-        let mut triangle = [0; 3];
-        for (corner, vertex) in triangle.iter_mut().zip(facet?.vertices) {
-            if !vertex.0.iter().all(|x| x.is_finite()) {
-                return Err(StlError::NotFinite { facet: index + 1 });
+pub fn read_stl(reader: &mut (impl Read + Seek), unit: f64) -> Result<Vec<[DVec3; 3]>, StlError> {
+    let facets = stl_io::create_stl_reader(reader)?.enumerate();
+    facets
+        .map(|(index, facet)| {
+            let corners = facet?.vertices.map(|vertex| glam::Vec3::from_array(vertex.0).as_dvec3() * unit);
+            if corners.iter().all(|corner| corner.is_finite()) {
+                Ok(corners)
+            } else {
+                Err(StlError::NotFinite { facet: index + 1 })
             }
-            // -0.0 and 0.0 are one place.
-            let key = vertex.0.map(|x| (x + 0.0).to_bits());
-            *corner = *numbers.entry(key).or_insert_with(|| {
-                positions.push(glam::Vec3::from_array(vertex.0).as_dvec3() * unit);
-                u32::try_from(positions.len() - 1).unwrap_or(u32::MAX)
-            });
-        }
-        triangles.push(triangle);
+        })
+        .collect()
+}
+
+/// A length of the mesh as the file holds it: rounded to f32 in units of `unit` metres.
+pub fn rounded(position: DVec3, unit: f64) -> DVec3 {
+    (position / unit).as_vec3().as_dvec3() * unit
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use std::io::Cursor;
+
+    fn wedge() -> (Vec<DVec3>, Vec<[u32; 3]>) {
+        let positions = vec![DVec3::ZERO, DVec3::new(0.03, 0.0, 0.0), DVec3::new(0.0, 0.02, 0.0), DVec3::new(0.0, 0.0, 0.01)];
+        (positions, vec![[0, 2, 1], [0, 1, 3], [1, 2, 3], [2, 0, 3]])
     }
-    Ok((positions, triangles))
+
+    fn written(name: &str) -> Vec<u8> {
+        let (positions, triangles) = wedge();
+        let mut bytes = Vec::new();
+        let header = Header { name, unit: "mm" };
+        write_stl(&mut bytes, &header, 1e-3, &positions, &triangles).unwrap();
+        bytes
+    }
+
+    /// The layout of the format: 80 bytes, a count, 50 bytes a facet (common practice since the format's first description).
+    #[test]
+    fn header_count_and_length() {
+        let bytes = written("solid Glocke für Nebel");
+        assert_eq!(bytes.len(), 84 + 4 * 50);
+        assert!(bytes.starts_with(b"strickle, unit mm: solid Glocke f?r Nebel   "));
+        assert_eq!(bytes[80..84], 4_u32.to_le_bytes());
+        // The first facet's normal: down.
+        assert_eq!(bytes[84..96], [0.0_f32, 0.0, -1.0].map(f32::to_le_bytes).concat());
+    }
+
+    #[test]
+    fn what_is_read_is_what_was_written_rounded_to_f32() {
+        let (positions, triangles) = wedge();
+        let read = read_stl(&mut Cursor::new(written("wedge")), 1e-3).unwrap();
+        let meant: Vec<[DVec3; 3]> = triangles.iter().map(|t| t.map(|i| rounded(positions[i as usize], 1e-3))).collect();
+        assert_eq!(read, meant);
+    }
+
+    #[test]
+    fn a_coordinate_that_is_no_number_is_named() {
+        let mut bytes = written("wedge");
+        bytes[84 + 50 + 12..84 + 50 + 16].copy_from_slice(&f32::NAN.to_le_bytes());
+        let refused = read_stl(&mut Cursor::new(bytes), 1e-3).unwrap_err();
+        assert_eq!(refused.to_string(), "facet 2 has a coordinate that is not a finite number");
+    }
 }

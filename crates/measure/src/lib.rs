@@ -7,9 +7,11 @@
 mod audit;
 mod figures;
 mod parry;
+mod weld;
 
 pub use audit::{Audit, audit};
 pub use figures::{Figures, figures};
+pub use weld::{Welded, weld_equal};
 pub use parry::{Disagreement, Parry, compare, parry};
 
 use glam::DVec3;

@@ -118,7 +118,9 @@ pub fn read_stl(reader: &mut (impl Read + Seek), unit: f64) -> Result<Vec<[DVec3
     let facets = stl_io::create_stl_reader(reader)?.enumerate();
     facets
         .map(|(index, facet)| {
-            let corners = facet?.vertices.map(|vertex| glam::Vec3::from_array(vertex.0).as_dvec3() * unit);
+            let corners = facet?
+                .vertices
+                .map(|vertex| glam::Vec3::from_array(vertex.0).as_dvec3() * unit);
             if corners.iter().all(|corner| corner.is_finite()) {
                 Ok(corners)
             } else {
@@ -139,7 +141,12 @@ mod tests {
     use std::io::Cursor;
 
     fn wedge() -> (Vec<DVec3>, Vec<[u32; 3]>) {
-        let positions = vec![DVec3::ZERO, DVec3::new(0.03, 0.0, 0.0), DVec3::new(0.0, 0.02, 0.0), DVec3::new(0.0, 0.0, 0.01)];
+        let positions = vec![
+            DVec3::ZERO,
+            DVec3::new(0.03, 0.0, 0.0),
+            DVec3::new(0.0, 0.02, 0.0),
+            DVec3::new(0.0, 0.0, 0.01),
+        ];
         (positions, vec![[0, 2, 1], [0, 1, 3], [1, 2, 3], [2, 0, 3]])
     }
 
@@ -159,14 +166,20 @@ mod tests {
         assert!(bytes.starts_with(b"strickle, unit mm: solid Glocke f?r Nebel   "));
         assert_eq!(bytes[80..84], 4_u32.to_le_bytes());
         // The first facet's normal: down.
-        assert_eq!(bytes[84..96], [0.0_f32, 0.0, -1.0].map(f32::to_le_bytes).concat());
+        assert_eq!(
+            bytes[84..96],
+            [0.0_f32, 0.0, -1.0].map(f32::to_le_bytes).concat()
+        );
     }
 
     #[test]
     fn what_is_read_is_what_was_written_rounded_to_f32() {
         let (positions, triangles) = wedge();
         let read = read_stl(&mut Cursor::new(written("wedge")), 1e-3).unwrap();
-        let meant: Vec<[DVec3; 3]> = triangles.iter().map(|t| t.map(|i| rounded(positions[i as usize], 1e-3))).collect();
+        let meant: Vec<[DVec3; 3]> = triangles
+            .iter()
+            .map(|t| t.map(|i| rounded(positions[i as usize], 1e-3)))
+            .collect();
         assert_eq!(read, meant);
     }
 
@@ -175,6 +188,9 @@ mod tests {
         let mut bytes = written("wedge");
         bytes[84 + 50 + 12..84 + 50 + 16].copy_from_slice(&f32::NAN.to_le_bytes());
         let refused = read_stl(&mut Cursor::new(bytes), 1e-3).unwrap_err();
-        assert_eq!(refused.to_string(), "facet 2 has a coordinate that is not a finite number");
+        assert_eq!(
+            refused.to_string(),
+            "facet 2 has a coordinate that is not a finite number"
+        );
     }
 }

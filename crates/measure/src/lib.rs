@@ -11,8 +11,8 @@ mod weld;
 
 pub use audit::{Audit, audit};
 pub use figures::{Figures, figures};
-pub use weld::{Welded, weld_equal};
 pub use parry::{Disagreement, Parry, compare, parry};
+pub use weld::{Welded, weld_equal};
 
 use glam::DVec3;
 

@@ -16,7 +16,10 @@ pub struct Welded {
 impl Welded {
     /// The mesh to be measured.
     pub fn triangles(&self) -> Triangles<'_> {
-        Triangles { positions: &self.positions, triangles: &self.triangles }
+        Triangles {
+            positions: &self.positions,
+            triangles: &self.triangles,
+        }
     }
 }
 

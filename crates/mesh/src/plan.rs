@@ -125,7 +125,7 @@ pub(crate) fn body(
             None => return Ok(plan),
             // Finer until every face keeps clear of the others.
             Some(_) if within > options.within * LEAST_SHARE && within > LEAST_WITHIN * extent => {
-                within *= 0.5
+                within *= 0.5;
             }
             Some(place) => {
                 return Err(MeshError::TooThin {

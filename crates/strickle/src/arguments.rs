@@ -39,7 +39,7 @@ pub(crate) const EXIT_STATUS: [(&str, &str); 4] = [
     ("0", "all holds"),
     (
         "1",
-        "the work was done and a verdict is NO: a figure is not what [expect] says",
+        "the work was done and a verdict is NO: a figure is not what [expect] says, or a proof fails",
     ),
     ("2", "the input or the usage is wrong"),
     (
@@ -93,6 +93,11 @@ pub(crate) enum Command {
     ///
     /// The figures are closed forms by the two theorems of Pappus and Guldin; what the part file expects is judged.
     Weigh(Weigh),
+    /// Prove that a part's mesh is that part
+    ///
+    /// The main job: the exact figures, what the mesh should weigh by its rings, and what is measured on the mesh that was
+    /// written and read back, side by side; where the difference comes from; and the answer.
+    Prove(Prove),
     /// List materials, or find them by words
     ///
     /// The table has densities in kg/m3 at 20 C. Your own materials stand in materials.toml in the program's folder among
@@ -132,6 +137,75 @@ pub(crate) struct Weigh {
 
     #[command(flatten)]
     pub(crate) output: Output,
+}
+
+/// Arguments of `prove`.
+#[derive(Debug, Args)]
+pub(crate) struct Prove {
+    #[command(flatten)]
+    pub(crate) parts: Parts,
+
+    /// Folder for the mesh (STL) and the figures (JSON); made where it is not there
+    ///
+    /// The files are named after the part file. Without it nothing is written and the mesh is proved in memory.
+    #[arg(short = 'o', long = "out", value_name = "FOLDER")]
+    pub(crate) folder: Option<PathBuf>,
+
+    /// Largest distance between mesh and true surface; 1/2000 of the largest extent unless said
+    ///
+    /// A bare number is in the part's unit: `--within 0.05mm`, `--within "1/64 in"`.
+    #[arg(long, value_name = "LENGTH")]
+    pub(crate) within: Option<String>,
+
+    /// Unit of the mesh file, which has none of its own; its header says it
+    #[arg(long, value_name = "UNIT", value_enum, default_value_t)]
+    pub(crate) unit: MeshUnit,
+
+    #[command(flatten)]
+    pub(crate) settings: Settings,
+
+    #[command(flatten)]
+    pub(crate) output: Output,
+}
+
+/// Units of a mesh file.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Default, ValueEnum)]
+pub(crate) enum MeshUnit {
+    /// Millimetre
+    #[default]
+    Mm,
+    /// Centimetre
+    Cm,
+    /// Metre
+    M,
+    /// Inch
+    In,
+    /// Foot
+    Ft,
+}
+
+impl MeshUnit {
+    /// The unit in metres.
+    pub(crate) fn metres(self) -> f64 {
+        match self {
+            Self::Mm => 1e-3,
+            Self::Cm => 1e-2,
+            Self::M => 1.0,
+            Self::In => 0.0254,
+            Self::Ft => 0.3048,
+        }
+    }
+
+    /// Its word, as it is typed.
+    pub(crate) fn word(self) -> &'static str {
+        match self {
+            Self::Mm => "mm",
+            Self::Cm => "cm",
+            Self::M => "m",
+            Self::In => "in",
+            Self::Ft => "ft",
+        }
+    }
 }
 
 /// The parts to work on.

@@ -8,6 +8,7 @@ mod expect;
 pub mod figures;
 
 mod material;
+mod proof;
 pub mod record;
 #[cfg(test)]
 mod sample;
@@ -15,6 +16,7 @@ mod study;
 mod weighing;
 
 pub use material::BodyMaterial;
+pub use proof::{Kept, Made, Weighed};
 pub use record::Record;
 pub use study::{Source, Study};
 

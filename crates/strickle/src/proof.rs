@@ -4,7 +4,7 @@
 //! that touch share places; the part is their sum, weighed with their densities.
 
 use crate::Study;
-use crate::record::{self, Audit, Budget, Measured, Mesh, Predicted, Verdict};
+use crate::record::{Audit, Budget, Measured, Mesh, Predicted, Verdict};
 use glam::{DMat3, DVec3};
 use measure::{Figures, Triangles, Welded};
 use mesh::{MeshError, Moments, Options, Plan, Solid};
@@ -59,7 +59,10 @@ impl Study {
     pub fn mesh(&self, options: &Options) -> Result<Made, MeshError> {
         let bodies = self.part.bodies.iter().zip(&self.exact().bodies);
         let solids: Vec<Solid> = bodies
-            .map(|(body, exact)| Solid { region: &body.region, volume: exact.volume })
+            .map(|(body, exact)| Solid {
+                region: &body.region,
+                volume: exact.volume,
+            })
             .collect();
         let plan = Plan::new(&solids, self.part.revolve, options)?;
         let mesh = plan.mesh()?;
@@ -69,7 +72,11 @@ impl Study {
     /// Measures the mesh as it was kept, compares, and judges: fills in the record's mesh, measured, audit, budget and
     /// verdict. Gives what was predicted and what was measured.
     pub fn prove(&mut self, made: &Made, kept: &Kept) -> (Weighed, Option<Weighed>) {
-        let densities: Vec<f64> = self.materials.iter().map(|material| material.density).collect();
+        let densities: Vec<f64> = self
+            .materials
+            .iter()
+            .map(|material| material.density)
+            .collect();
         let predicted = together(made.plan.predicted().iter().map(of_moments).zip(&densities));
         let bodies: Vec<Welded> = made
             .mesh
@@ -77,20 +84,41 @@ impl Study {
             .iter()
             .map(|body| measure::weld_equal(kept.facets.get(body.triangles.clone()).unwrap_or(&[])))
             .collect();
-        let audits: Vec<measure::Audit> = bodies.iter().map(|body| measure::audit(body.triangles())).collect();
-        let figures: Vec<Figures> = bodies.iter().map(|body| measure::figures(body.triangles())).collect();
-        let peers: Vec<Option<measure::Parry>> = bodies.iter().map(|body| measure::parry(body.triangles())).collect();
+        let audits: Vec<measure::Audit> = bodies
+            .iter()
+            .map(|body| measure::audit(body.triangles()))
+            .collect();
+        let figures: Vec<Figures> = bodies
+            .iter()
+            .map(|body| measure::figures(body.triangles()))
+            .collect();
+        let peers: Vec<Option<measure::Parry>> = bodies
+            .iter()
+            .map(|body| measure::parry(body.triangles()))
+            .collect();
 
         let mut reasons = soundness(&audits);
-        let measured = peers.iter().copied().collect::<Option<Vec<_>>>().map(|peers| {
-            for (peer, own) in peers.iter().zip(&figures) {
-                reasons.extend(measure::compare(own, peer).iter().map(disagreement));
-            }
-            // Volume and centre are parry's; the matrix is our own, whose principal moments parry has confirmed.
-            together(peers.iter().zip(&figures).map(|(peer, own)| (peer.volume, peer.centre, own.inertia)).zip(&densities))
-        });
+        let measured = peers
+            .iter()
+            .copied()
+            .collect::<Option<Vec<_>>>()
+            .map(|peers| {
+                for (peer, own) in peers.iter().zip(&figures) {
+                    reasons.extend(measure::compare(own, peer).iter().map(disagreement));
+                }
+                // Volume and centre are parry's; the matrix is our own, whose principal moments parry has confirmed.
+                together(
+                    peers
+                        .iter()
+                        .zip(&figures)
+                        .map(|(peer, own)| (peer.volume, peer.centre, own.inertia))
+                        .zip(&densities),
+                )
+            });
         let surface: f64 = figures.iter().map(|figures| figures.surface).sum();
-        let budget = measured.as_ref().map(|measured| self.budget(made, kept, measured.volume));
+        let budget = measured
+            .as_ref()
+            .map(|measured| self.budget(made, kept, measured.volume));
         if let Some(budget) = &budget {
             let allowed = self.rounding_of_the_sum(made.mesh.triangles.len(), surface);
             if budget.unexplained.is_nan() || budget.unexplained.abs() > allowed {
@@ -102,7 +130,12 @@ impl Study {
         } else {
             reasons.push("the mesh encloses no volume that could be measured".to_owned());
         }
-        reasons.extend(self.record.verdict.iter().flat_map(|verdict| verdict.reasons.clone()));
+        reasons.extend(
+            self.record
+                .verdict
+                .iter()
+                .flat_map(|verdict| verdict.reasons.clone()),
+        );
         self.record.mesh = Some(mesh_record(made, kept, &predicted));
         self.record.measured = measured.as_ref().map(|measured| Measured {
             by: "parry3d-f64",
@@ -114,7 +147,10 @@ impl Study {
         });
         self.record.audit = Some(summed(&audits));
         self.record.budget = budget;
-        self.record.verdict = Some(Verdict { holds: reasons.is_empty(), reasons });
+        self.record.verdict = Some(Verdict {
+            holds: reasons.is_empty(),
+            reasons,
+        });
         (predicted, measured)
     }
 
@@ -123,12 +159,25 @@ impl Study {
         let differences = || made.plan.differences().into_iter().flatten();
         let circumferential: f64 = differences().map(|edge| edge.circumferential).sum();
         let meridional: f64 = differences().map(|edge| edge.meridional).sum();
-        let rounded: Vec<DVec3> = made.mesh.positions.iter().map(|p| files::rounded(*p, kept.unit)).collect();
+        let rounded: Vec<DVec3> = made
+            .mesh
+            .positions
+            .iter()
+            .map(|p| files::rounded(*p, kept.unit))
+            .collect();
         let volume_of = |positions: &[DVec3]| -> f64 {
             let bodies = made.mesh.bodies.iter();
             let volumes = bodies.map(|body| {
-                let triangles = made.mesh.triangles.get(body.triangles.clone()).unwrap_or(&[]);
-                measure::figures(Triangles { positions, triangles }).volume
+                let triangles = made
+                    .mesh
+                    .triangles
+                    .get(body.triangles.clone())
+                    .unwrap_or(&[]);
+                measure::figures(Triangles {
+                    positions,
+                    triangles,
+                })
+                .volume
             });
             volumes.sum()
         };
@@ -154,20 +203,38 @@ impl Study {
 
 /// Volume, centre and inertia about it for unit density.
 fn of_moments(moments: &Moments) -> (f64, DVec3, DMat3) {
-    (moments.volume, moments.centre(), moments.inertia_about_centre())
+    (
+        moments.volume,
+        moments.centre(),
+        moments.inertia_about_centre(),
+    )
 }
 
 /// Bodies with their densities, as one.
 fn together<'a>(bodies: impl Iterator<Item = ((f64, DVec3, DMat3), &'a f64)> + Clone) -> Weighed {
-    let mass: f64 = bodies.clone().map(|((volume, ..), density)| volume * density).sum();
-    let centre = bodies.clone().map(|((volume, centre, _), density)| centre * (volume * density)).sum::<DVec3>() / mass;
-    let inertia = bodies.clone().fold(DMat3::ZERO, |sum, ((volume, own, inertia), density)| {
-        let d = own - centre;
-        let outer = DMat3::from_cols(d * d.x, d * d.y, d * d.z);
-        let shift = DMat3::from_diagonal(DVec3::splat(d.length_squared())) - outer;
-        sum + (inertia + shift * volume) * *density
-    });
-    Weighed { volume: bodies.map(|((volume, ..), _)| volume).sum(), mass, centre, inertia }
+    let mass: f64 = bodies
+        .clone()
+        .map(|((volume, ..), density)| volume * density)
+        .sum();
+    let centre = bodies
+        .clone()
+        .map(|((volume, centre, _), density)| centre * (volume * density))
+        .sum::<DVec3>()
+        / mass;
+    let inertia = bodies
+        .clone()
+        .fold(DMat3::ZERO, |sum, ((volume, own, inertia), density)| {
+            let d = own - centre;
+            let outer = DMat3::from_cols(d * d.x, d * d.y, d * d.z);
+            let shift = DMat3::from_diagonal(DVec3::splat(d.length_squared())) - outer;
+            sum + (inertia + shift * volume) * *density
+        });
+    Weighed {
+        volume: bodies.map(|((volume, ..), _)| volume).sum(),
+        mass,
+        centre,
+        inertia,
+    }
 }
 
 fn mesh_record(made: &Made, kept: &Kept, predicted: &Weighed) -> Mesh {
@@ -178,7 +245,10 @@ fn mesh_record(made: &Made, kept: &Kept, predicted: &Weighed) -> Mesh {
         within: made.plan.options().within,
         placement: made.plan.options().placement.word(),
         largest_deviation: made.plan.deviation(),
-        predicted: Predicted { volume: predicted.volume, centre: predicted.centre.to_array() },
+        predicted: Predicted {
+            volume: predicted.volume,
+            centre: predicted.centre.to_array(),
+        },
     }
 }
 
@@ -203,11 +273,17 @@ fn summed(audits: &[measure::Audit]) -> Audit {
 
 /// What is not sound, in words.
 fn soundness(audits: &[measure::Audit]) -> Vec<String> {
-    let all: record::Audit = summed(audits);
+    let all = summed(audits);
     let mut reasons: Vec<String> = [
-        (all.boundary_edges, "edges have a triangle on one side only: the mesh is open"),
+        (
+            all.boundary_edges,
+            "edges have a triangle on one side only: the mesh is open",
+        ),
         (all.nonmanifold_edges, "edges have more than two triangles"),
-        (all.flipped_edges, "edges have neighbours that face opposite ways"),
+        (
+            all.flipped_edges,
+            "edges have neighbours that face opposite ways",
+        ),
         (all.degenerate_triangles, "triangles have no area"),
         (all.duplicate_triangles, "triangles stand twice"),
     ]
@@ -222,5 +298,8 @@ fn soundness(audits: &[measure::Audit]) -> Vec<String> {
 }
 
 fn disagreement(found: &measure::Disagreement) -> String {
-    format!("parry3d-f64 and the program's own sum disagree on the {} by {:.1e}", found.on, found.by)
+    format!(
+        "parry3d-f64 and the program's own sum disagree on the {} by {:.1e}",
+        found.on, found.by
+    )
 }

@@ -4,6 +4,7 @@ mod completions;
 mod man;
 mod materials;
 mod new;
+mod prove;
 mod schema;
 mod weigh;
 
@@ -25,6 +26,7 @@ pub(crate) fn run(command: &Command, terminal: &mut Terminal) -> Result<Status, 
     match command {
         Command::New(arguments) => new::run(arguments, terminal),
         Command::Weigh(arguments) => weigh::run(arguments, terminal),
+        Command::Prove(arguments) => prove::run(arguments, terminal),
         Command::Materials(arguments) => materials::run(arguments, terminal),
         Command::Schema => schema::run(terminal),
         Command::Completions(arguments) => completions::run(arguments, terminal),

@@ -5,6 +5,9 @@ use super::units::{Kind, System, Unit, suited};
 /// Digits of the figure that a scale is chosen for.
 const DIGITS: i32 = 5;
 
+/// Digits of a small difference.
+const DIFFERENCE_DIGITS: i32 = 2;
+
 /// Digits that the smallest figure of a column gets too, as far as [`MOST_DECIMALS`] allow.
 const LEAST_DIGITS: i32 = 3;
 
@@ -35,13 +38,22 @@ impl Scale {
         Self::of_system(kind, System::Metric, size)
     }
 
+    /// The scale for a small difference of the magnitude `size` (SI), in metric units: two digits say enough of it.
+    pub fn of_difference(kind: Kind, size: f64) -> Self {
+        Self::with_digits(kind, System::Metric, size, DIFFERENCE_DIGITS)
+    }
+
     /// The scale for a figure of the magnitude `size` (SI).
     pub fn of_system(kind: Kind, system: System, size: f64) -> Self {
+        Self::with_digits(kind, system, size, DIGITS)
+    }
+
+    fn with_digits(kind: Kind, system: System, size: f64, digits: i32) -> Self {
         let unit = suited(kind, system, size.abs());
         let decimals = match power(size / unit.size) {
             None => Decimals::Fixed(0),
-            Some(power) if WRITTEN_OUT.contains(&power) => fixed(DIGITS - 1 - power),
-            Some(_) => Decimals::Power((DIGITS - 1).unsigned_abs() as usize),
+            Some(power) if WRITTEN_OUT.contains(&power) => fixed(digits - 1 - power),
+            Some(_) => Decimals::Power((digits - 1).unsigned_abs() as usize),
         };
         Self { unit, decimals }
     }

@@ -1,7 +1,6 @@
 //! The page that `prove` prints of one part.
 
-use crate::command::weigh::report::{WIDTH, title, turned_caution};
-use crate::command::weigh::expected;
+use crate::command::weigh::{caution, expected, title};
 use crate::grid::{Cell, Grid};
 use crate::style::{BAD, GOOD, QUIET, STRONG};
 use strickle::figures::{Kind, Scale, plain};
@@ -9,17 +8,30 @@ use strickle::record::Budget;
 use strickle::{Kept, Study, Weighed};
 
 /// The page of a part that was proved.
-pub(super) fn of(study: &Study, predicted: &Weighed, measured: Option<&Weighed>, kept: &Kept) -> String {
+pub(super) fn of(
+    study: &Study,
+    predicted: &Weighed,
+    measured: Option<&Weighed>,
+    kept: &Kept,
+) -> String {
     let sections = [
         title(study),
         mesh(study, kept),
         comparison(study, predicted, measured),
-        study.record.budget.as_ref().map(|budget| causes(study, budget)).unwrap_or_default(),
+        study
+            .record
+            .budget
+            .as_ref()
+            .map(|budget| causes(study, budget))
+            .unwrap_or_default(),
         expected::of(&study.record),
         verdict(study),
-        turned_caution(study),
+        caution(study),
     ];
-    let sections: Vec<String> = sections.into_iter().filter(|section| !section.is_empty()).collect();
+    let sections: Vec<String> = sections
+        .into_iter()
+        .filter(|section| !section.is_empty())
+        .collect();
     sections.join("\n")
 }
 
@@ -45,19 +57,39 @@ fn mesh(study: &Study, kept: &Kept) -> String {
 /// Exact, predicted and measured side by side.
 fn comparison(study: &Study, predicted: &Weighed, measured: Option<&Weighed>) -> String {
     let exact = study.exact();
-    let surface = study.record.measured.as_ref().map(|measured| measured.surface);
+    let surface = study
+        .record
+        .measured
+        .as_ref()
+        .map(|measured| measured.surface);
     let mut grid = Grid::new(2);
     let heads = ["exact", "predicted", "measured", "difference"].map(Cell::right);
-    grid.row([Cell::default()].into_iter().chain(heads).map(|cell| cell.styled(QUIET)));
-    let mut row = |what: &str, kind: Kind, size: f64, exact: f64, predicted: Option<f64>, measured: Option<f64>| {
+    grid.row(
+        [Cell::default()]
+            .into_iter()
+            .chain(heads)
+            .map(|cell| cell.styled(QUIET)),
+    );
+    let mut row = |what: &str,
+                   kind: Kind,
+                   size: f64,
+                   exact: f64,
+                   predicted: Option<f64>,
+                   measured: Option<f64>| {
         let scale = Scale::of(kind, size);
         let unit = scale.unit();
-        let text = |value: Option<f64>| Cell::right(value.map_or("-".to_owned(), |value| scale.number(value)));
+        let text = |value: Option<f64>| {
+            Cell::right(value.map_or("-".to_owned(), |value| scale.number(value)))
+        };
         let difference = measured.map(|measured| measured - exact);
         // A difference is small against the figure: it has a unit of its own.
         let own = difference.map(|difference| {
             let negligible = difference.abs() <= NEGLIGIBLE * size.abs();
-            if negligible { "none".to_owned() } else { Scale::of(kind, difference).short_signed(difference) }
+            if negligible {
+                "none".to_owned()
+            } else {
+                Scale::of_difference(kind, difference).signed(difference)
+            }
         });
         grid.row([
             Cell::left(format!("{what}, {unit}")),
@@ -70,7 +102,14 @@ fn comparison(study: &Study, predicted: &Weighed, measured: Option<&Weighed>) ->
     let of = |figure: fn(&Weighed) -> f64| (Some(figure(predicted)), measured.map(figure));
     let (p, m) = of(|w| w.volume);
     row("volume", Kind::Volume, exact.volume, exact.volume, p, m);
-    row("surface", Kind::Area, exact.surface, exact.surface, None, surface);
+    row(
+        "surface",
+        Kind::Area,
+        exact.surface,
+        exact.surface,
+        None,
+        surface,
+    );
     let (p, m) = of(|w| w.mass);
     row("mass", Kind::Mass, exact.mass, exact.mass, p, m);
     let extent = exact.largest_diameter.max(exact.length);
@@ -105,11 +144,11 @@ fn causes(study: &Study, budget: &Budget) -> String {
     ];
     for (index, (what, part)) in causes.into_iter().enumerate() {
         let label = if index == 0 { "volume" } else { "" };
-        let scale = Scale::of(Kind::Volume, part);
+        let scale = Scale::of_difference(Kind::Volume, part);
         grid.row([
             Cell::left(format!("{label:<9}")),
             Cell::left(what),
-            Cell::right(scale.short_signed(part)),
+            Cell::right(scale.signed(part)),
             Cell::right(format!("{:+.1e} of the whole", part / volume)).styled(QUIET),
         ]);
     }
@@ -122,14 +161,13 @@ fn verdict(study: &Study) -> String {
         return String::new();
     };
     if verdict.holds {
-        return format!(
-            "{GOOD}PROVED{GOOD:#}: closed, sound, and every difference explained.\n"
-        );
+        return format!("{GOOD}PROVED{GOOD:#}: closed, sound, and every difference explained.\n");
     }
-    let mut text = format!("{BAD}NOT PROVED{BAD:#}:\n");
-    for reason in &verdict.reasons {
-        text += &format!("  - {STRONG}{}{STRONG:#}\n", plain(reason));
-    }
-    let _ = WIDTH;
-    text
+    let reasons = verdict
+        .reasons
+        .iter()
+        .map(|reason| format!("  - {STRONG}{}{STRONG:#}\n", plain(reason)));
+    std::iter::once(format!("{BAD}NOT PROVED{BAD:#}:\n"))
+        .chain(reasons)
+        .collect()
 }

@@ -6,7 +6,7 @@ use strickle::figures::{Scale, plain};
 use strickle::record::{Judgement, Record};
 
 /// A line for each expectation; nothing where there are none.
-pub(super) fn of(record: &Record) -> String {
+pub(in crate::command) fn of(record: &Record) -> String {
     if record.expect.is_empty() {
         return String::new();
     }

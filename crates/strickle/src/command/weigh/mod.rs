@@ -1,12 +1,14 @@
 //! `strickle weigh`.
 
 mod bodies;
-mod expected;
+pub(super) mod expected;
 mod inch;
 mod report;
 mod surfaces;
 mod theorems;
 mod whole;
+
+pub(in crate::command) use report::{caution, title};
 
 use crate::arguments::Weigh;
 use crate::command::each_part;

@@ -29,7 +29,7 @@ pub(super) fn of(study: &Study) -> String {
             String::new()
         },
         expected::of(&study.record),
-        closing(study),
+        self_check(study) + &caution(study),
     ];
     let sections: Vec<String> = sections
         .into_iter()
@@ -44,7 +44,7 @@ pub(super) fn is_full_turn(part: &Part) -> bool {
 }
 
 /// Name, number, file, and the angle of a part turn.
-fn title(study: &Study) -> String {
+pub(in crate::command) fn title(study: &Study) -> String {
     let record = &study.record;
     let name = plain(&record.part.name);
     let number = record.part.number.as_deref().map(plain).unwrap_or_default();
@@ -68,19 +68,23 @@ fn degrees(angle: f64) -> String {
     text.trim_end_matches('0').trim_end_matches('.').to_owned()
 }
 
-/// The self-check, and a caution where the part is heavy.
-fn closing(study: &Study) -> String {
-    let exact = study.exact();
-    let check = format!(
+/// The self-check.
+fn self_check(study: &Study) -> String {
+    format!(
         "{QUIET}Self-check: the theorems used backwards give both centroids to {} digits.{QUIET:#}\n",
-        agreeing_digits(exact.implied_centroid.difference)
-    );
+        agreeing_digits(study.exact().implied_centroid.difference)
+    )
+}
+
+/// A caution where the part is heavy.
+pub(in crate::command) fn caution(study: &Study) -> String {
+    let exact = study.exact();
     let most = exact.mass_range.map_or(exact.mass, |[_, most]| most);
     if most <= LIFTING {
-        return check;
+        return String::new();
     }
     format!(
-        "{check}{CAUTION}Caution:{CAUTION:#} heavier than {LIFTING} kg. Lift it with tackle rated for it, keep to\n\
+        "{CAUTION}Caution:{CAUTION:#} heavier than {LIFTING} kg. Lift it with tackle rated for it, keep to\n\
          your local rules on lifting, and weigh the real part first.\n"
     )
 }

@@ -23,8 +23,10 @@ pub mod outline;
 mod physical;
 mod point;
 mod read;
+mod schema;
 mod sizes;
 mod source;
+mod starter;
 mod steps;
 mod tolerance;
 mod tree;
@@ -36,4 +38,6 @@ pub use model::{
     Body, Expectation, Expected, LengthUnit, Material, OwnMaterial, Part, Size, StepOrigin,
     Tolerance,
 };
-pub use read::{Neighbours, Setting, length, read, schema, starter};
+pub use read::{Neighbours, Setting, length, read};
+pub use schema::schema;
+pub use starter::starter;

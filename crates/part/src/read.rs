@@ -229,13 +229,3 @@ pub fn length(text: &str, bare: LengthUnit) -> Result<f64, Fault> {
     }
     Ok(bare.to(LengthUnit::Metre, 1.0).of(quantity.value))
 }
-
-/// The JSON Schema of the part file.
-pub fn schema() -> serde_json::Value {
-    serde_json::Value::Bool(true)
-}
-
-/// The text of a new part file called `name`: commented, and itself a legal part.
-pub fn starter(name: &str) -> String {
-    format!("format = 1\n\n[part]\nname = {name:?}\n")
-}

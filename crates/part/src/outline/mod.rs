@@ -1,14 +1,30 @@
 //! From the steps of an outline to a closed loop of edges, and from loops to a region.
 
 mod bodies;
+mod chain;
+mod circle;
+mod corners;
+mod draw;
+mod origins;
 mod region;
+mod rounding;
+mod settle;
+mod slope;
 mod step;
+mod steps;
+mod walk;
+mod wall;
+mod wording;
 
 use crate::{Fault, LengthUnit, Neighbours, StepOrigin};
+use wording::Wording;
 
 pub use bodies::check_bodies;
 pub use region::region;
 pub use step::{Centre, Coordinate, Corner, Kind, Outline, Side, Slope, Step, Target};
+
+/// Faults of one outline that are told at most. More would have one cause, and only fill the memory.
+const MOST_FAULTS: usize = 100;
 
 /// A closed outline.
 #[derive(Debug, Clone, PartialEq)]
@@ -30,6 +46,22 @@ pub fn build(
     neighbours: &dyn Neighbours,
     faults: &mut Vec<Fault>,
 ) -> Option<Built> {
-    let _ = (outline, words_prefix, unit, neighbours, faults);
-    None
+    let _ = neighbours;
+    let wording = Wording { unit };
+    match outline {
+        Outline::Steps(steps, span) => steps::closed(steps, span, words_prefix, wording, faults),
+        Outline::Circle {
+            r,
+            z,
+            radius,
+            span,
+        } => circle::circle([*r, *z], *radius, span, words_prefix, wording, faults),
+        Outline::Svg { .. } | Outline::Csv { .. } => None,
+        Outline::Wall {
+            line,
+            thickness,
+            grow,
+            span,
+        } => wall::wall(line, *thickness, *grow, span, wording, faults),
+    }
 }

@@ -6,7 +6,7 @@ use super::step::{Corner, Step};
 use super::wording::Wording;
 use crate::Fault;
 use glam::DVec2;
-use profile::{CornerFault, Edge, Treated, chamfer_corner, round_corner};
+use profile::{CornerFault, Treated, chamfer_corner, round_corner};
 
 /// Treats the corners of `links` one after the other, so that each one finds what its neighbours have left. Where
 /// `closed`, the last link ends where the first one starts.
@@ -166,7 +166,11 @@ impl Place<'_> {
             (self.cut_after, on_after, after, "end"),
         ] {
             if is_cut && is_short {
-                help.push_str(&format!("; the corner at the {end} of {edge} already takes a part of it"));
+                help.push_str("; the corner at the ");
+                help.push_str(end);
+                help.push_str(" of ");
+                help.push_str(edge);
+                help.push_str(" already takes a part of it");
             }
         }
         let message = format!(

@@ -50,18 +50,15 @@ pub fn build(
     let wording = Wording { unit };
     match outline {
         Outline::Steps(steps, span) => steps::closed(steps, span, words_prefix, wording, faults),
-        Outline::Circle {
-            r,
-            z,
-            radius,
-            span,
-        } => circle::circle([*r, *z], *radius, span, words_prefix, wording, faults),
+        Outline::Circle { r, z, radius, span } => {
+            circle::circle([*r, *z], *radius, span, words_prefix, wording, faults)
+        }
         Outline::Svg { .. } | Outline::Csv { .. } => None,
         Outline::Wall {
             line,
             thickness,
             grow,
             span,
-        } => wall::wall(line, *thickness, *grow, span, wording, faults),
+        } => wall::wall(line, *thickness, *grow, span, words_prefix, wording, faults),
     }
 }

@@ -38,11 +38,7 @@ impl Origins {
 
     /// Notes the edge that closes an outline; the first step's name is its, since it arrives there.
     pub(super) fn closing(&mut self, first: &Step, last: &Step) -> u32 {
-        self.add(
-            first.name.clone(),
-            "the closing edge",
-            last.span.clone(),
-        )
+        self.add(first.name.clone(), "the closing edge", last.span.clone())
     }
 
     /// Notes the edge that treats the corner where `step` arrives, between the edges `before` and `after`. It has the name of

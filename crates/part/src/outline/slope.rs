@@ -55,7 +55,10 @@ pub(super) fn sloped(
             if rate.is_infinite() && length > 0.0 {
                 return Err(Fault::new(
                     "step::slope_parallel",
-                    format!("{} is square to the axis and never gets to another z", step.words),
+                    format!(
+                        "{} is square to the axis and never gets to another z",
+                        step.words
+                    ),
                     slope.span(),
                     "a right angle",
                 )
@@ -69,11 +72,16 @@ pub(super) fn sloped(
             if rate == 0.0 && change != 0.0 {
                 return Err(Fault::new(
                     "step::slope_parallel",
-                    format!("{} runs along the axis and never gets to another diameter", step.words),
+                    format!(
+                        "{} runs along the axis and never gets to another diameter",
+                        step.words
+                    ),
                     slope.span(),
                     format!("no {key}"),
                 )
-                .help(format!("give z in place of d or r, or a {key} that is not 0")));
+                .help(format!(
+                    "give z in place of d or r, or a {key} that is not 0"
+                )));
             }
             if rate * change < 0.0 {
                 let (goes, says) = if change > 0.0 {
@@ -91,9 +99,9 @@ pub(super) fn sloped(
                     slope.span(),
                     format!("this says {says}"),
                 )
-                .help(format!(
-                    "change the sign; with d or r given the step goes towards +z, to go the other way give z in its place"
-                )));
+                .help(
+                    "change the sign; with d or r given the step goes towards +z, to go the other way give z in its place",
+                ));
             }
             let length = if change == 0.0 { 0.0 } else { change / rate };
             Ok(DVec2::new(r, start.y + length))

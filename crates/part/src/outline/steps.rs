@@ -2,7 +2,7 @@
 
 use super::chain::{Link, edges};
 use super::corners::treat_corners;
-use super::draw::{Drawn, Leg};
+use super::draw::Leg;
 use super::origins::Origins;
 use super::settle::settled;
 use super::step::{Kind, Step};

@@ -21,10 +21,12 @@ impl Target {
     /// The coordinates that are given, on from `start`.
     pub(super) fn given(&self, start: DVec2) -> [Option<f64>; 2] {
         let on = |coordinate: &Option<(Coordinate, Span)>, start: f64| {
-            coordinate.as_ref().map(|(coordinate, _)| match *coordinate {
-                Coordinate::At(at) => at,
-                Coordinate::By(by) => start + by,
-            })
+            coordinate
+                .as_ref()
+                .map(|(coordinate, _)| match *coordinate {
+                    Coordinate::At(at) => at,
+                    Coordinate::By(by) => start + by,
+                })
         };
         [on(&self.r, start.x), on(&self.z, start.y)]
     }

@@ -1,5 +1,6 @@
 //! A thin wall, given by one face.
 
+use super::Built;
 use super::chain::edges;
 use super::corners::treat_corners;
 use super::origins::Origins;
@@ -7,7 +8,6 @@ use super::settle::settled;
 use super::step::{Side, Step};
 use super::steps::open;
 use super::wording::Wording;
-use super::Built;
 use crate::{Fault, Span};
 use profile::{Edge, Grow, WallFault};
 
@@ -18,11 +18,12 @@ pub(super) fn wall(
     thickness: f64,
     grow: Option<Side>,
     span: &Span,
+    prefix: &str,
     wording: Wording,
     faults: &mut Vec<Fault>,
 ) -> Option<Built> {
     let before = faults.len();
-    let mut origins = Origins::new("wall");
+    let mut origins = Origins::new(prefix);
     let (mut links, corners) = open(line, &mut origins, wording, faults);
     if faults.len() > before {
         return None;
@@ -133,6 +134,11 @@ fn told(
             .also(at, "")
             .help("a wall goes round a corner of less than half a turn; round it with an arc")
         }
-        ref other => Fault::new("wall::impossible", format!("no wall: {other}"), span.clone(), ""),
+        ref other => Fault::new(
+            "wall::impossible",
+            format!("no wall: {other}"),
+            span.clone(),
+            "",
+        ),
     }
 }

@@ -68,6 +68,9 @@ mod tests {
     #[test]
     fn places_give_both_coordinates() {
         assert_eq!(MM.place(DVec2::new(0.0125, -0.04)), "r = 12.5, z = -40 mm");
-        assert_eq!(MM.place(DVec2::new(-0.0, 1.0 / 3.0)), "r = 0, z = 333.333 mm");
+        assert_eq!(
+            MM.place(DVec2::new(-0.0, 1.0 / 3.0)),
+            "r = 0, z = 333.333 mm"
+        );
     }
 }

@@ -38,7 +38,9 @@ pub(super) fn arc(leg: &Leg<'_>, centre: &Centre) -> Result<Drawn, Fault> {
                 centre.span.clone(),
                 "the centre is in the middle between the ends",
             )
-            .help("add centre_on = \"left\" or \"right\": the side of travel on which the centre is"));
+            .help(
+                "add centre_on = \"left\" or \"right\": the side of travel on which the centre is",
+            ));
         };
         return Ok(Turn {
             angle: PI,
@@ -49,8 +51,16 @@ pub(super) fn arc(leg: &Leg<'_>, centre: &Centre) -> Result<Drawn, Fault> {
     }
 
     let turn = Turn {
-        angle: if centre.long { TAU - sweep.abs() } else { sweep.abs() },
-        rest: if centre.long { sweep.abs() } else { TAU - sweep.abs() },
+        angle: if centre.long {
+            TAU - sweep.abs()
+        } else {
+            sweep.abs()
+        },
+        rest: if centre.long {
+            sweep.abs()
+        } else {
+            TAU - sweep.abs()
+        },
         counter_clockwise: (sweep > 0.0) != centre.long,
     };
     let (side, word, other) = if turn.counter_clockwise {
@@ -73,7 +83,9 @@ pub(super) fn arc(leg: &Leg<'_>, centre: &Centre) -> Result<Drawn, Fault> {
             centre.span.clone(),
             format!("on the {word} of travel"),
         )
-        .help(format!("{help} for the arc that goes round the other way, or write centre_on = \"{word}\"")));
+        .help(format!(
+            "{help} for the arc that goes round the other way, or write centre_on = \"{word}\""
+        )));
     }
     Ok(turn.arc(leg.start, leg.end))
 }

@@ -28,11 +28,7 @@ pub(super) fn parabola(leg: &Leg<'_>, control: &Target, span: &Span) -> Result<D
 ///
 /// # Errors
 /// The control points make it run to and fro on a straight line, or do not leave the start.
-pub(super) fn cubic(
-    leg: &Leg<'_>,
-    controls: &[Target; 2],
-    span: &Span,
-) -> Result<Drawn, Fault> {
+pub(super) fn cubic(leg: &Leg<'_>, controls: &[Target; 2], span: &Span) -> Result<Drawn, Fault> {
     let [first, second] = controls;
     let (first, second) = (leg.point(first)?, leg.point(second)?);
     let curve = Bezier {

@@ -38,11 +38,6 @@ impl Drawn {
     pub(super) fn last(&self) -> Edge {
         self.second.unwrap_or(self.first)
     }
-
-    /// The edges in order of travel.
-    pub(super) fn edges(self) -> impl Iterator<Item = Edge> {
-        std::iter::once(self.first).chain(self.second)
-    }
 }
 
 /// A step and the corners that it joins.

@@ -16,7 +16,9 @@ pub(super) fn arc(leg: &Leg<'_>, span: &Span) -> Result<Drawn, Fault> {
             span.clone(),
             "",
         )
-        .help("the first step draws nothing; give this arc a radius, a centre or a point on its way"));
+        .help(
+            "the first step draws nothing; give this arc a radius, a centre or a point on its way",
+        ));
     };
     let chord = leg.chord();
     let turn = Turn::between(arriving, chord);

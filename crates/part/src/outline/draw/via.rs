@@ -29,7 +29,8 @@ pub(super) fn arc(leg: &Leg<'_>, via: &Target, span: &Span) -> Result<Drawn, Fau
             "`via` lies on the straight line through the ends of {}",
             leg.step.words
         );
-        let help = "leave `via` out for a straight step, or move it to the side that the arc bends to";
+        let help =
+            "leave `via` out for a straight step, or move it to the side that the arc bends to";
         return fault("step::via_in_line", message, help);
     }
     Ok(turn.arc(leg.start, leg.end))

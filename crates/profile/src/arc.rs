@@ -124,22 +124,120 @@ impl Arc {
         0.5 + trig::atan2(along, outward) / self.sweep
     }
 
-    /// Parameter of the circle's point in this direction from the centre, if the arc passes it.
-    fn parameter_towards(self, direction: DVec2) -> Option<f64> {
-        // From the centre the arc's middle lies square to the chord. Measured from there, an arc of at most half a turn
-        // is never more than a quarter turn away: no angle has to be wrapped.
-        let to_middle = -left_of(self.chord()) * self.sweep.signum();
-        let t = 0.5 + trig::angle_between(to_middle, direction) / self.sweep;
-        (0.0..=1.0).contains(&t).then_some(t)
-    }
-
     /// The least box that holds it, exact up to rounding.
     pub fn bounds(self) -> Bounds {
-        [DVec2::X, DVec2::Y, DVec2::NEG_X, DVec2::NEG_Y]
-            .into_iter()
-            .filter_map(|direction| self.parameter_towards(direction))
-            .fold(Bounds::of_corners(self.start, self.end), |bounds, t| {
-                bounds.with(self.point(t))
-            })
+        let mut bounds = Bounds::of_corners(self.start, self.end);
+        let (sine, cosine) = trig::sin_cos(0.5 * self.sweep.abs());
+        let chord = self.chord();
+        let length = chord.length();
+        let along = chord / length;
+        let to_middle = -left_of(along) * self.sweep.signum();
+        let middle = self.start + 0.5 * chord + to_middle * (0.5 * length * sine / (1.0 + cosine));
+        let radius = 0.5 * length / sine;
+        for axis in 0..2 {
+            // The circle's extreme along an axis lies on the arc where it is no further from the arc's middle, seen from
+            // the centre, than the ends are. It lies radius * (1 - cos) beyond the middle: sin^2 / (1 + cos).
+            let turn_cosine = to_middle[axis].abs();
+            if turn_cosine > cosine {
+                let beyond = radius * along[axis] * along[axis] / (1.0 + turn_cosine);
+                let extreme = middle[axis] + beyond.copysign(to_middle[axis]);
+                bounds.min[axis] = bounds.min[axis].min(extreme);
+                bounds.max[axis] = bounds.max[axis].max(extreme);
+            }
+        }
+        bounds
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use std::f64::consts::FRAC_PI_2;
+
+    #[test]
+    fn the_box_of_a_turned_arc() {
+        // Radius 5 about (1, 2), 3-4-5 points.
+        let centre = DVec2::new(1.0, 2.0);
+        let arc = |from: [f64; 2], to: [f64; 2], left: bool| {
+            Arc::about(
+                centre + DVec2::from(from),
+                centre + DVec2::from(to),
+                centre,
+                left,
+            )
+            .bounds()
+        };
+        let close = |found: Bounds, min: [f64; 2], max: [f64; 2]| {
+            let off = (found.min - DVec2::from(min)).abs() + (found.max - DVec2::from(max)).abs();
+            assert!(off.max_element() < 4e-15, "{found:?}");
+        };
+        close(arc([4.0, 3.0], [3.0, 4.0], true), [4.0, 5.0], [5.0, 6.0]);
+        close(arc([4.0, -3.0], [4.0, 3.0], true), [5.0, -1.0], [6.0, 5.0]);
+        close(arc([4.0, 3.0], [4.0, -3.0], false), [5.0, -1.0], [6.0, 5.0]);
+        close(
+            arc([3.0, -4.0], [-3.0, 4.0], true),
+            [-2.0, -2.0],
+            [6.0, 7.0],
+        );
+        close(
+            arc([3.0, -4.0], [-3.0, 4.0], false),
+            [-4.0, -3.0],
+            [4.0, 6.0],
+        );
+        close(arc([5.0, 0.0], [0.0, 5.0], true), [1.0, 2.0], [6.0, 7.0]);
+    }
+
+    #[test]
+    fn a_flat_arc_keeps_its_digits() {
+        // The radius is a million chords: the sagitta is chord^2 / (8 radius) to the 13th digit.
+        let sweep = 1e-6;
+        let arc = Arc {
+            start: DVec2::new(1.0, 2.0),
+            end: DVec2::new(2.0, 2.0),
+            sweep,
+        };
+        let sagitta = sweep / 8.0;
+        assert!((2.0 - arc.bounds().min.y - sagitta).abs() < 1e-15);
+        assert!((2.0 - arc.point(0.5).y - sagitta).abs() < 1e-15);
+        assert!((arc.radius() - 1e6).abs() < 1e-6);
+        assert!(
+            (arc.centre() - DVec2::new(1.5, 1e6 + 2.0))
+                .abs()
+                .max_element()
+                < 1e-6
+        );
+        for t in [0.0, 1e-9, 0.25, 0.5, 0.999_999, 1.0] {
+            assert!((arc.parameter_of(arc.point(t)) - t).abs() < 1e-15);
+        }
+    }
+
+    #[test]
+    fn half_a_turn_goes_the_way_it_is_told_in_spite_of_rounding() {
+        let centre = DVec2::new(0.1, 0.2);
+        for left in [true, false] {
+            for turn in 0..50 {
+                let out = trig::direction(f64::from(turn)) * 0.3;
+                let arc = Arc::about(centre + out, centre - out, centre, left);
+                assert_eq!(arc.sweep > 0.0, left);
+                assert!(arc.sweep.abs() <= PI && arc.sweep.abs() > PI - 1e-12);
+            }
+        }
+        // Clearly less than half a turn goes the short way whatever is said.
+        let arc = Arc::about(DVec2::X, DVec2::Y, DVec2::ZERO, false);
+        assert_eq!(arc.sweep, FRAC_PI_2);
+    }
+
+    #[test]
+    fn parameters_are_found_again_up_to_half_a_turn() {
+        for sweep in [PI, -PI, 1.0, -2.5, 1e-3] {
+            let arc = Arc {
+                start: DVec2::new(0.3, -0.2),
+                end: DVec2::new(-0.1, 0.7),
+                sweep,
+            };
+            for t in [0.0, 0.1, 0.5, 0.75, 1.0] {
+                assert!((arc.parameter_of(arc.point(t)) - t).abs() < 1e-15);
+            }
+        }
     }
 }

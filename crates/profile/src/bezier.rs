@@ -61,7 +61,11 @@ impl Bezier {
     /// The longest of the three legs of the control polygon.
     pub(crate) fn longest_leg(self) -> f64 {
         let [a, b, c, d] = self.points;
-        (b - a).length().max((c - b).length()).max((d - c).length())
+        (b - a)
+            .length_squared()
+            .max((c - b).length_squared())
+            .max((d - c).length_squared())
+            .sqrt()
     }
 
     /// Parameters in (0, 1), ascending, between which its curvature keeps its sign and is monotone: inflections, extremes
@@ -92,11 +96,11 @@ impl Bezier {
                 extreme[i + k - 1] -= 1.5 * w * (k as f64) * v;
             }
         }
-        let mut knots = sign_changes(&extreme, 0.0, 1.0);
-        knots.extend(sign_changes(&w, 0.0, 1.0));
+        let mut knots = sign_changes(&extreme, 0.0, 1.0).to_vec();
+        knots.extend_from_slice(&sign_changes(&w, 0.0, 1.0));
         // A cusp, or on a straight Bezier the point where it turns back, is where the speed is least.
         let slowest = [v[1], 2.0 * v[2], 3.0 * v[3], 4.0 * v[4]];
-        knots.extend(sign_changes(&slowest, 0.0, 1.0));
+        knots.extend_from_slice(&sign_changes(&slowest, 0.0, 1.0));
         knots.sort_by(f64::total_cmp);
         knots.dedup();
         knots

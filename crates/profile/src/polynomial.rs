@@ -1,8 +1,8 @@
 //! Real roots of polynomials of low degree.
 
-/// Halvings after which a bracket of doubles cannot get any narrower (1074 + 52 would be needed for a root at 0; below
-/// 2^-80 of the interval nothing depends on it).
-const HALVINGS: usize = 80;
+/// Steps after which a search ends: as many halvings leave less than 1e-36 of the bracket, and Newton's steps in between
+/// shrink at least as fast.
+const HALVINGS: usize = 120;
 
 /// Value and derivative at `t` of the polynomial with these coefficients, the constant first (Horner).
 fn value_and_slope(coefficients: &[f64], t: f64) -> (f64, f64) {
@@ -14,34 +14,60 @@ fn value_and_slope(coefficients: &[f64], t: f64) -> (f64, f64) {
         })
 }
 
-/// Parameters in the open interval (`low`, `high`) where the polynomial (constant coefficient first) changes its sign, in
-/// ascending order, to rounding. A root that it only touches may be left out: none of the callers needs it.
+/// The most coefficients that are needed: degree five.
+const MOST: usize = 6;
+
+/// A few numbers in ascending order, without a place of their own in memory.
+#[derive(Debug, Clone, Copy, Default)]
+pub(crate) struct Few {
+    values: [f64; MOST],
+    count: usize,
+}
+
+impl Few {
+    fn push(&mut self, value: f64) {
+        // A polynomial of degree five has five roots.
+        if let Some(place) = self.values.get_mut(self.count) {
+            *place = value;
+            self.count += 1;
+        }
+    }
+}
+
+impl std::ops::Deref for Few {
+    type Target = [f64];
+    fn deref(&self) -> &[f64] {
+        &self.values[..self.count]
+    }
+}
+
+/// Parameters in the open interval (`low`, `high`) where the polynomial (constant coefficient first, at most degree five)
+/// changes its sign, in ascending order, to rounding. A root that it only touches may be left out: none of the callers
+/// needs it.
 ///
 /// Between neighbouring roots of its derivative a polynomial is monotone, so that a change of sign brackets a root.
-pub(crate) fn sign_changes(coefficients: &[f64], low: f64, high: f64) -> Vec<f64> {
+pub(crate) fn sign_changes(coefficients: &[f64], low: f64, high: f64) -> Few {
+    let mut roots = Few::default();
     if coefficients.len() < 2 {
-        return Vec::new();
+        return roots;
     }
-    let derivative: Vec<f64> = coefficients
-        .iter()
-        .enumerate()
-        .skip(1)
-        .map(|(power, c)| power as f64 * c)
-        .collect();
-    let mut knots = sign_changes(&derivative, low, high);
-    knots.push(high);
-    let mut roots = Vec::new();
+    let mut derivative = [0.0; MOST];
+    for (power, c) in coefficients.iter().enumerate().skip(1) {
+        derivative[power - 1] = power as f64 * c;
+    }
+    let knots = sign_changes(&derivative[..coefficients.len() - 1], low, high);
     let mut from = low;
     let mut value_from = value_and_slope(coefficients, low).0;
-    for to in knots {
+    for to in knots.iter().copied().chain([high]) {
         let value_to = value_and_slope(coefficients, to).0;
         // A zero at `from` has been counted, or is the end of the interval.
         if value_from * value_to < 0.0 {
+            let function = |t| value_and_slope(coefficients, t);
             roots.push(bracketed(
-                |t| value_and_slope(coefficients, t),
-                from,
-                to,
+                function,
+                [from, to],
                 value_from,
+                0.5 * (from + to),
             ));
         } else if value_to == 0.0 && to < high && value_from != 0.0 {
             roots.push(to);
@@ -51,17 +77,22 @@ pub(crate) fn sign_changes(coefficients: &[f64], low: f64, high: f64) -> Vec<f64
     roots
 }
 
-/// Root of a function with a change of sign between `low` and `high`; `at_low` is its value at `low`. Newton's steps,
-/// halving where one leaves the bracket or gains too little; ends when the bracket or the step has no digit left.
+/// A Newton's step this small a part of the bracket is the last: it doubles the digits once more, or is noise.
+const LAST_STEP: f64 = 1e-11;
+
+/// Root of a function with a change of sign between the two ends of `bracket`; `at_low` is its value at the first. Newton's
+/// steps from `guess`, halving where one leaves the bracket or gains too little.
 pub(crate) fn bracketed(
     value_and_slope: impl Fn(f64) -> (f64, f64),
-    mut low: f64,
-    mut high: f64,
+    bracket: [f64; 2],
     at_low: f64,
+    guess: f64,
 ) -> f64 {
-    let mut t = 0.5 * (low + high);
+    let [mut low, mut high] = bracket;
+    let mut t = guess.max(low).min(high);
     let mut last_step = high - low;
-    for _ in 0..2 * HALVINGS {
+    let small = LAST_STEP * last_step;
+    for _ in 0..HALVINGS {
         let (value, slope) = value_and_slope(t);
         if value == 0.0 {
             return t;
@@ -73,15 +104,18 @@ pub(crate) fn bracketed(
         }
         let newton = t - value / slope;
         let step = (newton - t).abs();
-        let next = if newton > low && newton < high && step < 0.5 * last_step {
+        if newton >= low && newton <= high && step <= small {
+            return newton;
+        }
+        let next = if newton >= low && newton <= high && step <= 0.5 * last_step {
             last_step = step;
             newton
         } else {
             last_step = 0.5 * (high - low);
             low + last_step
         };
-        if next == t || (next - t).abs() <= f64::EPSILON * t.abs().max(f64::MIN_POSITIVE) {
-            return next;
+        if next == t {
+            return t;
         }
         t = next;
     }
@@ -109,7 +143,7 @@ mod tests {
         let roots = [0.05, 0.2, 0.5, 0.75, 0.96];
         let found = sign_changes(&with_roots(&roots), 0.0, 1.0);
         assert_eq!(found.len(), roots.len());
-        for (root, found) in roots.iter().zip(found) {
+        for (root, found) in roots.iter().zip(found.iter()) {
             assert!((root - found).abs() < 1e-12, "{root} {found}");
         }
     }

@@ -7,8 +7,9 @@ use crate::polynomial::bracketed;
 use crate::{Base, Bezier, Edge, EllipseArc, Parallel, trig};
 use glam::DVec2;
 
-/// A spiral turns by at most this angle: a little over an eighth of a turn, so that a quarter circle is two pieces.
-const MOST_TURN: f64 = 0.8;
+/// A spiral turns by at most the angle of this cosine, 46 degrees: a little over an eighth of a turn, so that a quarter
+/// circle is two pieces.
+const LEAST_TURN_COSINE: f64 = 0.695;
 
 /// A piece that turns too much is halved at most this often: what is left then is shorter than rounding (near the tip of
 /// a cusp, where all of the turn sits in one point).
@@ -142,9 +143,12 @@ impl Spiral {
         }
         let middle = 0.5 * (self.t[0] + self.t[1]);
         let (direction, curvature) = self.sided(edge, middle, true);
-        let turn = trig::angle_between(self.direction[0], direction).abs()
-            + trig::angle_between(direction, self.direction[1]).abs();
-        if turn <= MOST_TURN || halvings == 0 || middle <= self.t[0] || middle >= self.t[1] {
+        // It turns one way: where it turns little from end to end and to the middle, it has not gone round.
+        let [from, to] = self.direction;
+        let turns_little = [(from, to), (from, direction), (direction, to)]
+            .into_iter()
+            .all(|(p, q)| p.dot(q) >= LEAST_TURN_COSINE);
+        if turns_little || halvings == 0 || middle <= self.t[0] || middle >= self.t[1] {
             pieces.push(self);
             return;
         }
@@ -188,7 +192,8 @@ impl Parallel {
                 let (from, to) = (ratio(pair[0], true), ratio(pair[1], false));
                 (from * to < 0.0).then(|| {
                     // Its slope is not at hand: by halving alone.
-                    bracketed(|t| (ratio(t, true), 0.0), pair[0], pair[1], from)
+                    let middle = 0.5 * (pair[0] + pair[1]);
+                    bracketed(|t| (ratio(t, true), 0.0), [pair[0], pair[1]], from, middle)
                 })
             })
             .collect()

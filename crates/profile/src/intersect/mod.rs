@@ -8,7 +8,9 @@ mod closed_form;
 mod conic;
 mod contact;
 mod graphs;
+mod neighbours;
 mod own;
+mod reach;
 mod straight;
 #[cfg(test)]
 mod tests;
@@ -19,6 +21,7 @@ use crate::{Bounds, Edge};
 use conic::Conic;
 use contact::Contacts;
 use glam::DVec2;
+use reach::reach;
 use straight::Straight;
 
 /// Where two edges meet.
@@ -59,7 +62,7 @@ const ROUNDING: f64 = 8.0 * f64::EPSILON;
 /// A point lies on both edges within `within` and a few roundings of the coordinates. Along the edges it is as sure as the
 /// angle between them allows: rounding divided by the sine of that angle.
 pub fn meetings(a: &Edge, b: &Edge, within: f64) -> Vec<Meeting> {
-    let (box_a, box_b) = (a.bounds(), b.bounds());
+    let (box_a, box_b) = (reach(a), reach(b));
     let largest = |bounds: Bounds| bounds.min.abs().max(bounds.max.abs()).max_element();
     let within = within.max(ROUNDING * largest(box_a).max(largest(box_b)));
     if !box_a.grown(within).meets(box_b) {
@@ -80,7 +83,17 @@ pub fn meetings(a: &Edge, b: &Edge, within: f64) -> Vec<Meeting> {
             closed_form::conic_line(&conic, &Straight::from(*line), within, &mut found);
             found.exchange();
         }
-        _ => graphs::contacts(a, b, within, &mut found),
+        _ => {
+            if let Some((t_a, t_b, point)) = neighbours::only_corner(a, b) {
+                return vec![Meeting::Point {
+                    t_a,
+                    t_b,
+                    point,
+                    crossing: false,
+                }];
+            }
+            graphs::contacts(a, b, within, &mut found);
+        }
     }
     found.into_meetings(a, b, within)
 }

@@ -232,12 +232,7 @@ fn ellipse_and_circle() {
     let x = (16.0_f64 - y * y).sqrt();
     let half = ellipse((0.0, 0.0), (5.0, 3.0), 0.0, -90.0, 180.0);
     let circle = arc((0.0, 0.0), 4.0, -90.0, 180.0);
-    assert_meet(
-        &half,
-        &circle,
-        &[(v(x, y), true), (v(x, -y), true)],
-        ROUNDING,
-    );
+    assert_meet(&half, &circle, &[(v(x, y), true), (v(x, -y), true)], 8e-15);
     // The circle of curvature at the vertex (5, 0) has radius 9/5 and contact of the fourth order: from inside.
     let osculating = arc((5.0 - 1.8, 0.0), 1.8, -90.0, 180.0);
     assert_meet(&half, &osculating, &[(v(5.0, 0.0), false)], 2e-3);
@@ -482,4 +477,20 @@ fn a_parallel_curve_beyond_the_radius_of_curvature_meets_itself() {
     assert!((point.y - (3.75 + 2.0 / 4.0)).abs() < 1e-13);
     assert!(self_meetings(&parallel(&parabola, 0.49)).is_empty());
     assert!(self_meetings(&parallel(&parabola, -2.0)).is_empty());
+}
+
+#[test]
+fn a_swallows_tail_of_any_size_is_found_once() {
+    // The parabola's radius of curvature is 1/2 at its vertex: from there on the tail grows, its height with
+    // the square: at 1e-8 it is below rounding.
+    let parabola = Edge::Bezier(crate::Bezier::parabola(
+        v(-2.0, 4.0),
+        v(0.0, -4.0),
+        v(2.0, 4.0),
+    ));
+    for exponent in 0..8 {
+        let beyond = crate::trig::pow(10.0, -f64::from(exponent));
+        let found = self_meetings(&parallel(&parabola, 0.5 + beyond));
+        assert_eq!(found.len(), 1, "{beyond:e} {found:?}");
+    }
 }

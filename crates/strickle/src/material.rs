@@ -81,7 +81,11 @@ fn unknown(word: &str, span: Span, part: &Part, table: &Table) -> Fault {
     if let Some(near) = shop::nearest(word, own).or_else(|| table.nearest(word)) {
         return fault.help(format!("did you mean `{near}`?"));
     }
-    // A trade word, such as `bronze`, stands for several materials.
+    // A trade word, such as `bronze` (or a slip of the keys for it), stands for several materials.
+    let word = match table.search(&[word]).as_slice() {
+        [] => table.nearest_word(word).unwrap_or(word),
+        _ => word,
+    };
     let found = table.search(&[word]);
     let names: Vec<&str> = found
         .iter()
@@ -89,18 +93,87 @@ fn unknown(word: &str, span: Span, part: &Part, table: &Table) -> Fault {
         .map(|material| material.name.as_str())
         .collect();
     if names.is_empty() {
-        fault.help(
+        return fault.help(
             "`strickle materials` lists them; one that is missing is a [[material]] with name and density in this file",
-        )
+        );
+    }
+    let more = if found.len() > names.len() {
+        ", ..."
     } else {
-        let more = if found.len() > names.len() {
-            ", ..."
-        } else {
-            ""
+        ""
+    };
+    fault.help(format!(
+        "`strickle materials {word}` finds {}{more}; one that is missing is a [[material]] in this file",
+        names.join(", ")
+    ))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::sample;
+
+    /// The help that a part of this material is refused with.
+    fn help(word: &str) -> String {
+        let mut body = sample::ring("ring", 0.04, 0.06, 0.0, 0.03);
+        body.material = Material::Designation {
+            word: word.to_owned(),
+            span: 2..4,
         };
-        fault.help(format!(
-            "`strickle materials {word}` finds {}{more}; one that is missing is a [[material]] in this file",
-            names.join(", ")
-        ))
+        let mut part = sample::part(std::f64::consts::TAU, vec![body]);
+        part.materials.push(part::OwnMaterial {
+            name: "house bronze".to_owned(),
+            density: 8800.0,
+            span: 0..1,
+        });
+        let faults = of_bodies(&part, sample::SOURCE, &Table::built_in()).unwrap_err();
+        let fault = faults.iter().next().unwrap();
+        assert_eq!(
+            (fault.code, fault.labels[0].span.clone()),
+            ("material::unknown", 2..4)
+        );
+        fault.help.clone().unwrap()
+    }
+
+    #[test]
+    fn an_unknown_material_is_told_what_was_meant() {
+        assert_eq!(help("CC48OK"), "did you mean `CC480K`?");
+        assert_eq!(help("house bronse"), "did you mean `house bronze`?");
+        for word in ["bronze", "bronce"] {
+            assert!(help(word).starts_with("`strickle materials bronze` finds CC491K, CC480K"));
+        }
+        assert!(help("unobtainium").starts_with("`strickle materials` lists them"));
+    }
+
+    #[test]
+    fn every_kind_of_material_is_looked_up() {
+        let of = |material: &Material| {
+            let mut part = sample::part(std::f64::consts::TAU, Vec::new());
+            part.materials.push(part::OwnMaterial {
+                name: "own".to_owned(),
+                density: 1234.0,
+                span: 0..1,
+            });
+            of_body(material, &part, &Table::built_in()).unwrap()
+        };
+        let designation = of(&Material::Designation {
+            word: "cc 480 k".to_owned(),
+            span: 0..1,
+        });
+        assert_eq!(designation.designation.as_deref(), Some("CC480K"));
+        assert_eq!(
+            (designation.density, designation.range),
+            (8700.0, Some([8600.0, 9000.0]))
+        );
+        let own = of(&Material::Own(0));
+        assert_eq!(
+            (own.designation.as_deref(), own.density),
+            (Some("own"), 1234.0)
+        );
+        let bare = of(&Material::Density(7.0));
+        assert_eq!(
+            (bare.designation, bare.density, bare.range),
+            (None, 7.0, None)
+        );
     }
 }

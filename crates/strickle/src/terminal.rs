@@ -113,6 +113,9 @@ impl Terminal {
             .with_links(false);
         let mut text = String::new();
         for diagnostic in faults.diagnostics() {
+            if !text.is_empty() {
+                text.push('\n');
+            }
             if handler.render_report(&mut text, diagnostic).is_err() {
                 // A report that cannot be drawn is still told.
                 let _ = writeln!(text, "{}: {diagnostic}", faults.file());

@@ -100,3 +100,6 @@ impl<'t> Value<'t> {
 fn short(offset: usize) -> u32 {
     u32::try_from(offset).unwrap_or(u32::MAX)
 }
+
+#[cfg(test)]
+mod tests;

@@ -2,7 +2,7 @@
 
 use crate::fault::Found;
 use crate::nearest::unknown_word;
-use crate::tolerance::general_tolerance;
+use crate::sizes::general_tolerance;
 use crate::tree::{Entry, Fields, Keys, Kind};
 use crate::values::Values;
 use crate::{Fault, LengthUnit};

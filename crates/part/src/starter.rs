@@ -49,10 +49,38 @@ fn quoted(name: &str) -> String {
         match c {
             '"' => quoted.push_str("\\\""),
             '\\' => quoted.push_str("\\\\"),
-            c if c.is_control() => quoted.push_str(&format!("\\u{:04X}", u32::from(c))),
+            // Control characters have four digits at most.
+            c if c.is_control() => {
+                quoted.push_str("\\u");
+                quoted.extend(
+                    (0..4).rev().filter_map(|digit| {
+                        char::from_digit((u32::from(c) >> (4 * digit)) & 15, 16)
+                    }),
+                );
+            }
             c => quoted.push(c),
         }
     }
     quoted.push('"');
     quoted
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn any_name_is_a_string_of_toml() {
+        for name in [
+            "Fog bell",
+            "3/4\" \\ valve",
+            "two\nlines \u{7f}\u{9}",
+            "Glöckchen 🔔",
+            "",
+            "\0",
+        ] {
+            let table: toml::Table = starter(name).parse().unwrap();
+            assert_eq!(table["part"]["name"].as_str(), Some(name));
+        }
+    }
 }

@@ -119,6 +119,24 @@ impl Values<'_> {
         Some(metres)
     }
 
+    /// A length above 0, in metres.
+    pub(crate) fn positive(&self, value: &Value<'_>, what: &str, found: &mut Found) -> Option<f64> {
+        let length = self.length(value, what, found)?;
+        if length > 0.0 {
+            return Some(length);
+        }
+        found.push(
+            Fault::new(
+                "value::not_positive",
+                format!("{what} is more than 0"),
+                value.span(),
+                "",
+            )
+            .help("give a length above 0"),
+        );
+        None
+    }
+
     /// An angle in degrees.
     pub(crate) fn degrees(&self, value: &Value<'_>, what: &str, found: &mut Found) -> Option<f64> {
         let quantity = self.quantity(value, what, found)?;

@@ -1,99 +1,12 @@
 //! The value of an expression, with its dimension checked at every step.
 
 use super::Written;
-use super::function::{Function, cos_degrees, sin_degrees};
 use super::parse::{Expression, Operation};
+use super::quantity::{Failure, MadeOf, Quantity, Scope};
+use crate::Fault;
 use crate::dimension::Dimension;
-use crate::{Fault, LengthUnit};
 use profile::trig;
 use std::ops::Range;
-
-/// A value with its dimension, in the system of a [`Scope`]'s length, degree and kilogram.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub(crate) struct Quantity {
-    pub(crate) value: f64,
-    pub(crate) dimension: Dimension,
-    /// How firmly it has its dimension.
-    pub(crate) made_of: MadeOf,
-}
-
-/// What a quantity was made of.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
-pub(crate) enum MadeOf {
-    /// Bare numbers only: it takes the unit that its place needs.
-    Numbers,
-    /// Bare numbers, and sizes that are bare numbers.
-    BareSizes,
-    /// Something that has a unit.
-    Units,
-}
-
-impl Quantity {
-    /// A bare number.
-    pub(crate) fn number(value: f64) -> Self {
-        Self {
-            value,
-            dimension: Dimension::NUMBER,
-            made_of: MadeOf::Numbers,
-        }
-    }
-
-    /// True for a bare number, which takes the unit that its place needs.
-    pub(crate) fn is_bare(self) -> bool {
-        self.made_of == MadeOf::Numbers
-    }
-
-    /// As a plain number, if it is one; a size without a unit counts as one where only a number can stand.
-    pub(crate) fn as_number(self) -> Option<f64> {
-        let plain = self.dimension == Dimension::NUMBER || self.made_of != MadeOf::Units;
-        plain.then_some(self.value)
-    }
-}
-
-/// Why there is no value.
-#[derive(Debug)]
-pub(crate) enum Failure {
-    /// This is wrong.
-    Fault(Fault),
-    /// A size that it needs has a fault of its own.
-    Silent,
-}
-
-impl From<Fault> for Failure {
-    fn from(fault: Fault) -> Self {
-        Self::Fault(fault)
-    }
-}
-
-/// What an expression is evaluated in.
-pub(crate) struct Scope<'s> {
-    /// What bare numbers are in.
-    pub(crate) bare: LengthUnit,
-    /// What lengths are computed in. The bare unit keeps the digits of a drawing; the metre those of a density.
-    pub(crate) system: LengthUnit,
-    /// The values of the sizes in the bare unit, degrees; `None` for those with a fault.
-    pub(crate) sizes: &'s [Option<Quantity>],
-}
-
-impl Scope<'_> {
-    /// The bare number `quantity` as a quantity of `dimension`.
-    pub(crate) fn adopt(&self, quantity: Quantity, dimension: Dimension) -> Quantity {
-        Quantity {
-            value: self.in_system(quantity.value, dimension),
-            dimension,
-            made_of: quantity.made_of,
-        }
-    }
-
-    fn in_system(&self, value: f64, dimension: Dimension) -> f64 {
-        if self.bare == self.system {
-            value
-        } else {
-            let factor = self.bare.to(self.system, dimension.length_power());
-            factor.of(value)
-        }
-    }
-}
 
 /// The value of `expression`.
 pub(crate) fn evaluate(
@@ -114,12 +27,12 @@ pub(crate) fn evaluate(
 
 /// A value on the stack and the part of the text that it is the value of.
 #[derive(Clone)]
-struct Operand {
-    quantity: Quantity,
-    at: Range<usize>,
+pub(super) struct Operand {
+    pub(super) quantity: Quantity,
+    pub(super) at: Range<usize>,
 }
 
-struct Machine<'m> {
+pub(super) struct Machine<'m> {
     written: &'m Written<'m>,
     scope: &'m Scope<'m>,
     stack: Vec<Operand>,
@@ -132,7 +45,12 @@ impl Machine<'_> {
             .expect("the parser puts every operand before its operation")
     }
 
-    fn fault(&self, code: &'static str, message: impl Into<String>, at: &Range<usize>) -> Fault {
+    pub(super) fn fault(
+        &self,
+        code: &'static str,
+        message: impl Into<String>,
+        at: &Range<usize>,
+    ) -> Fault {
         Fault::new(code, message, self.written.span(at.clone()), "")
     }
 
@@ -246,7 +164,7 @@ impl Machine<'_> {
     }
 
     /// Gives bare numbers among `operands` the dimension of the others, which must all have the same.
-    fn unify(&self, operands: &mut [Operand], verb: &str) -> Result<(), Failure> {
+    pub(super) fn unify(&self, operands: &mut [Operand], verb: &str) -> Result<(), Failure> {
         let Some(first) = operands
             .iter()
             .position(|operand| !operand.quantity.is_bare())
@@ -343,158 +261,6 @@ impl Machine<'_> {
             trig::pow(value, number)
         };
         Ok(joined(value, dimension, base, exponent))
-    }
-
-    fn call(
-        &self,
-        function: Function,
-        mut arguments: Vec<Operand>,
-        at: &Range<usize>,
-    ) -> Result<Operand, Failure> {
-        if matches!(function, Function::Min | Function::Max) {
-            self.unify(&mut arguments, "compared with")?;
-        }
-        let first = arguments
-            .first()
-            .cloned()
-            .expect("the parser has counted the arguments");
-        let end = arguments.last().map_or(at.end, |last| last.at.end);
-        let made_of = arguments
-            .iter()
-            .map(|operand| operand.quantity.made_of)
-            .max()
-            .unwrap_or(MadeOf::Numbers);
-        let value = first.quantity.value;
-        let plain = |value: f64, dimension: Dimension| Quantity {
-            value,
-            dimension,
-            made_of,
-        };
-        let quantity = match function {
-            Function::Abs => plain(value.abs(), first.quantity.dimension),
-            Function::Min | Function::Max => {
-                let values = arguments.iter().map(|operand| operand.quantity.value);
-                let least = function == Function::Min;
-                let best = values.fold(value, |a, b| if least { a.min(b) } else { a.max(b) });
-                plain(best, first.quantity.dimension)
-            }
-            Function::Sqrt => {
-                if value < 0.0 {
-                    return Err(self
-                        .fault(
-                            "expression::root_of_negative",
-                            "a negative number has no square root",
-                            &first.at,
-                        )
-                        .help("with the sizes as they are this comes to less than 0")
-                        .into());
-                }
-                match first.quantity.dimension.power(0.5) {
-                    Some(dimension) => plain(value.sqrt(), dimension),
-                    None => return Err(self.absurd_root(&first)),
-                }
-            }
-            Function::Sin | Function::Cos | Function::Tan => {
-                let degrees = self.degrees(&first)?;
-                let (sin, cos) = (sin_degrees(degrees), cos_degrees(degrees));
-                let value = match function {
-                    Function::Sin => sin,
-                    Function::Cos => cos,
-                    _ if cos == 0.0 => {
-                        return Err(self
-                            .fault(
-                                "expression::division_by_zero",
-                                "the tangent of a right angle is infinite",
-                                &first.at,
-                            )
-                            .help("tan has no value at 90 degrees")
-                            .into());
-                    }
-                    _ => sin / cos,
-                };
-                // A ratio is a plain number whatever the angle came from.
-                plain_number(value)
-            }
-            Function::Asin | Function::Acos | Function::Atan => self.angle(function, &first)?,
-        };
-        Ok(Operand {
-            quantity,
-            at: at.start..end,
-        })
-    }
-
-    fn absurd_root(&self, operand: &Operand) -> Failure {
-        let words = operand.quantity.dimension.words();
-        self.fault(
-            "expression::power",
-            format!("the square root of {words} is nothing that can be measured"),
-            &operand.at,
-        )
-        .help("the square root of an area is a length")
-        .into()
-    }
-
-    fn degrees(&self, operand: &Operand) -> Result<f64, Failure> {
-        if operand.quantity.is_bare() || operand.quantity.dimension == Dimension::ANGLE {
-            return Ok(operand.quantity.value);
-        }
-        let words = operand.quantity.dimension.words();
-        Err(self
-            .fault(
-                "expression::angle_expected",
-                format!("sin, cos and tan take an angle, not {words}"),
-                &operand.at,
-            )
-            .help("give an angle its unit where the size is given: \"8 deg\"; a plain number becomes one by * 1 deg")
-            .into())
-    }
-
-    fn angle(&self, function: Function, operand: &Operand) -> Result<Quantity, Failure> {
-        let quantity = operand.quantity;
-        if !quantity.is_bare() && quantity.dimension != Dimension::NUMBER {
-            let words = quantity.dimension.words();
-            return Err(self
-                .fault(
-                    "expression::ratio_expected",
-                    format!("{} takes a ratio, not {words}", function.word()),
-                    &operand.at,
-                )
-                .help("divide one length by another")
-                .into());
-        }
-        let value = quantity.value;
-        if function != Function::Atan && value.abs() > 1.0 {
-            return Err(self
-                .fault(
-                    "expression::out_of_range",
-                    format!(
-                        "{} takes values from -1 to 1, and this is {value}",
-                        function.word()
-                    ),
-                    &operand.at,
-                )
-                .help("no angle has such a sine or cosine")
-                .into());
-        }
-        let radians = match function {
-            Function::Asin => trig::asin(value),
-            Function::Acos => trig::acos(value),
-            _ => trig::atan(value),
-        };
-        Ok(Quantity {
-            value: radians.to_degrees(),
-            dimension: Dimension::ANGLE,
-            made_of: MadeOf::Units,
-        })
-    }
-}
-
-/// A plain number that does not become a length by where it stands.
-fn plain_number(value: f64) -> Quantity {
-    Quantity {
-        value,
-        dimension: Dimension::NUMBER,
-        made_of: MadeOf::Units,
     }
 }
 

@@ -1,13 +1,18 @@
 //! Expressions: numbers with units, names of sizes, arithmetic.
 
+mod call;
 mod evaluate;
+mod explain;
 mod function;
+mod measure;
 mod parse;
+mod quantity;
 mod token;
 
-pub(crate) use evaluate::{Failure, MadeOf, Quantity, Scope, evaluate};
+pub(crate) use evaluate::evaluate;
 pub(crate) use function::FUNCTIONS;
 pub(crate) use parse::{Expression, Names, Parsed, parse, parse_tokens, tokens_of};
+pub(crate) use quantity::{Failure, MadeOf, Quantity, Scope};
 pub(crate) use token::{Placed, Token};
 
 use crate::Span;

@@ -45,6 +45,7 @@ pub(super) struct Centre {
 /// A path of an SVG file beside the part file.
 #[derive(Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
+#[expect(clippy::struct_field_names, reason = "they are the keys of the file")]
 pub(super) struct Svg {
     /// The file.
     #[schemars(length(min = 1))]

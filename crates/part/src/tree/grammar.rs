@@ -1,12 +1,11 @@
 //! From words to statements, lists and tables.
 
 use super::assembly::{Assembly, KeyPath};
-use super::table::{Key, Origin, Table};
-use super::{Kind, List, Value};
+use super::table::Table;
+use super::{Kind, Value};
 use crate::fault::Found;
 use crate::nearest::grouped;
 use crate::{Fault, Span, limits};
-use std::borrow::Cow;
 use toml_parser::Source;
 use toml_parser::lexer::{Lexer, Token, TokenKind};
 
@@ -58,10 +57,10 @@ pub(super) struct Grammar<'t, 'f> {
     /// The end of the text, once the rest of it is not to be read.
     end: Option<Token>,
     /// Brackets and braces open here.
-    open: usize,
+    pub(super) open: usize,
     /// Values so far.
     values: usize,
-    damaged: bool,
+    pub(super) damaged: bool,
 }
 
 impl<'t> Grammar<'t, '_> {
@@ -80,14 +79,14 @@ impl<'t> Grammar<'t, '_> {
         self.token.span().start()..self.token.span().end()
     }
 
-    fn spaces(&mut self) {
+    pub(super) fn spaces(&mut self) {
         while self.at(TokenKind::Whitespace) {
             self.next();
         }
     }
 
     /// Passes blanks, comments and line ends.
-    fn blanks(&mut self) {
+    pub(super) fn blanks(&mut self) {
         loop {
             match self.token.kind() {
                 TokenKind::Whitespace => {}
@@ -199,7 +198,7 @@ impl<'t> Grammar<'t, '_> {
     }
 
     /// The equals sign and the value after a key.
-    fn assigned(&mut self, path: &KeyPath<'t>, depth: usize) -> Result<Value<'t>, Lost> {
+    pub(super) fn assigned(&mut self, path: &KeyPath<'t>, depth: usize) -> Result<Value<'t>, Lost> {
         self.spaces();
         if !self.at(TokenKind::Equals) {
             let key = path.last();
@@ -258,71 +257,8 @@ impl<'t> Grammar<'t, '_> {
         self.recover();
     }
 
-    /// One or several words with points between.
-    fn key(&mut self, expected: &'static str) -> Result<KeyPath<'t>, Lost> {
-        let mut path = KeyPath::default();
-        loop {
-            let key = self.simple_key(expected)?;
-            path.push(key);
-            // A blank may stand before the point.
-            let blank =
-                self.at(TokenKind::Whitespace) && self.text[self.span().end..].starts_with('.');
-            if blank {
-                self.next();
-            }
-            if !self.at(TokenKind::Dot) {
-                return Ok(path);
-            }
-            if path.len() == limits::NESTING {
-                self.too_deep();
-                return Err(Lost);
-            }
-            self.next();
-            self.spaces();
-        }
-    }
-
-    fn simple_key(&mut self, expected: &'static str) -> Result<Key<'t>, Lost> {
-        let span = self.span();
-        let quoted = match self.token.kind() {
-            TokenKind::Atom => false,
-            TokenKind::BasicString | TokenKind::LiteralString => true,
-            kind => {
-                let (message, help) = match kind {
-                    TokenKind::Equals => ("a key is missing before the equals sign", expected),
-                    TokenKind::MlBasicString | TokenKind::MlLiteralString => (
-                        "a key is not written over several lines",
-                        "write the key without quotes",
-                    ),
-                    _ => ("a key is expected here", expected),
-                };
-                self.found
-                    .push(Fault::new("toml::key", message, span, "").help(help));
-                return Err(Lost);
-            }
-        };
-        let mut name = Cow::Borrowed("");
-        let mut wrong = None;
-        if let Some(raw) = self.source.get(self.token) {
-            raw.decode_key(&mut name, &mut |error: toml_parser::ParseError| {
-                wrong = wrong.take().or(Some(error.unexpected()));
-            });
-        }
-        if let Some(place) = wrong {
-            self.found.push(if quoted {
-                Fault::new("toml::key", "the key in quotes cannot be read", span, "")
-                    .help("write the key without quotes")
-            } else {
-                bad_key(&self.text[span.clone()], &span, place)
-            });
-            return Err(Lost);
-        }
-        self.next();
-        Ok(Key { name, span })
-    }
-
     /// A value; `depth` lists and tables are around it.
-    fn value(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
+    pub(super) fn value(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
         let span = self.span();
         self.count(&span)?;
         match self.token.kind() {
@@ -356,120 +292,7 @@ impl<'t> Grammar<'t, '_> {
         }
     }
 
-    fn list(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
-        let open = self.span();
-        let mut items = Vec::new();
-        self.next();
-        loop {
-            self.blanks();
-            if self.at(TokenKind::RightSquareBracket) {
-                let span = open.start..self.span().end;
-                self.next();
-                items.shrink_to_fit();
-                let of_tables = false;
-                return Ok(Value::new(
-                    Kind::List(Box::new(List { items, of_tables })),
-                    &span,
-                ));
-            }
-            if self.at(TokenKind::Eof) || self.at_statement() {
-                return self.unclosed(open, "list", "]");
-            }
-            items.push(self.value(depth + 1)?);
-            self.blanks();
-            match self.token.kind() {
-                TokenKind::Comma => self.next(),
-                TokenKind::RightSquareBracket | TokenKind::Eof => {}
-                _ if self.at_statement() => {}
-                TokenKind::Equals => {
-                    self.found.push(
-                        Fault::new(
-                            "toml::key_in_list",
-                            "a list holds values, not keys",
-                            self.span(),
-                            "",
-                        )
-                        .also(open, "the list begins here")
-                        .help("a step with its keys stands in braces: { d = 40, z = 0 }"),
-                    );
-                    return Err(Lost);
-                }
-                TokenKind::RightCurlyBracket => {
-                    return self.unclosed(open, "list", "]");
-                }
-                _ => self.missing_comma(),
-            }
-        }
-    }
-
-    fn inline_table(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
-        let open = self.span();
-        let mut table = Table::new(Origin::Inline);
-        self.next();
-        loop {
-            self.blanks();
-            match self.token.kind() {
-                TokenKind::RightCurlyBracket => {
-                    let span = open.start..self.span().end;
-                    self.next();
-                    table.entries.shrink_to_fit();
-                    return Ok(Value::new(Kind::Table(Box::new(table)), &span));
-                }
-                TokenKind::Eof
-                | TokenKind::LeftCurlyBracket
-                | TokenKind::LeftSquareBracket
-                | TokenKind::RightSquareBracket => return self.unclosed(open, "table", "}"),
-                _ => {}
-            }
-            let path = self.key("a table holds keys with values: { d = 40, z = 0 }")?;
-            let value = self.assigned(&path, depth + 1)?;
-            Assembly::insert_inline(&mut table, path, value, self.found);
-            self.blanks();
-            match self.token.kind() {
-                TokenKind::Comma => self.next(),
-                TokenKind::Atom | TokenKind::BasicString | TokenKind::LiteralString => {
-                    self.missing_comma();
-                }
-                TokenKind::Equals | TokenKind::Dot => {
-                    self.found.push(
-                        Fault::new("toml::comma", "a comma is expected here", self.span(), "")
-                            .help("between two keys of a table stands a comma"),
-                    );
-                    return Err(Lost);
-                }
-                _ => {}
-            }
-        }
-    }
-
-    /// Reports a comma missing before this word, and goes on as if it were there.
-    pub(super) fn missing_comma(&mut self) {
-        let at = self.span().start;
-        let before = self.text[..at].trim_end().len();
-        self.found.push(
-            Fault::new("toml::comma", "a comma is missing here", before..before, "")
-                .help("between two values stands a comma"),
-        );
-    }
-
-    fn unclosed<T>(&mut self, open: Span, what: &str, closing: &str) -> Result<T, Lost> {
-        self.found.push(
-            Fault::new(
-                "toml::unclosed",
-                format!("the {what} that begins here is not closed"),
-                open,
-                "",
-            )
-            .also(
-                self.span().start..self.span().start,
-                format!("`{closing}` is expected before this"),
-            )
-            .help(format!("write {closing} at the end of the {what}")),
-        );
-        Err(Lost)
-    }
-
-    fn too_deep(&mut self) {
+    pub(super) fn too_deep(&mut self) {
         self.found.push(
             Fault::new(
                 "limit::nesting",
@@ -502,74 +325,6 @@ impl<'t> Grammar<'t, '_> {
         self.end = self.lexer.by_ref().last();
         Err(Lost)
     }
-
-    /// True where a new statement begins although a list is still open: the line is a header, or `key =`.
-    fn at_statement(&self) -> bool {
-        let start = self.span().start;
-        let line_start = self.text[..start].trim_end_matches([' ', '\t']);
-        if !(line_start.is_empty() || line_start.ends_with('\n')) {
-            return false;
-        }
-        match self.token.kind() {
-            TokenKind::Atom => self.text[self.span().end..]
-                .trim_start_matches([' ', '\t'])
-                .starts_with('='),
-            TokenKind::LeftSquareBracket => is_header(&self.text[start..]),
-            _ => false,
-        }
-    }
-
-    /// Skips to the next statement after the structure was lost.
-    fn recover(&mut self) {
-        self.damaged = true;
-        // A list that was not closed ends where the next statement begins.
-        if self.open > 0 && self.at_statement() {
-            self.open = 0;
-            return;
-        }
-        loop {
-            match self.token.kind() {
-                TokenKind::Eof => break,
-                TokenKind::LeftSquareBracket | TokenKind::LeftCurlyBracket => self.open += 1,
-                TokenKind::RightSquareBracket | TokenKind::RightCurlyBracket => {
-                    self.open = self.open.saturating_sub(1);
-                }
-                TokenKind::Newline => {
-                    self.next();
-                    self.spaces();
-                    if self.open == 0 || self.at_statement() {
-                        break;
-                    }
-                    continue;
-                }
-                _ => {}
-            }
-            self.next();
-        }
-        self.open = 0;
-    }
-}
-
-/// True where the line that `text` begins with is a table's header: `[size]`, `[[body]]`.
-fn is_header(text: &str) -> bool {
-    let line = text.lines().next().unwrap_or_default();
-    let line = line.split('#').next().unwrap_or_default().trim_end();
-    let Some(inner) = line
-        .strip_prefix('[')
-        .and_then(|line| line.strip_suffix(']'))
-    else {
-        return false;
-    };
-    let name = inner
-        .strip_prefix('[')
-        .and_then(|inner| inner.strip_suffix(']'))
-        .unwrap_or(inner)
-        .trim();
-    name.starts_with(|c: char| c.is_ascii_alphabetic())
-        && !matches!(name, "true" | "false" | "inf" | "nan")
-        && name
-            .bytes()
-            .all(|byte| byte.is_ascii_alphanumeric() || matches!(byte, b'_' | b'-' | b'.'))
 }
 
 pub(super) fn control_character(at: usize) -> Fault {
@@ -580,26 +335,4 @@ pub(super) fn control_character(at: usize) -> Fault {
         "",
     )
     .help("delete it and type the line again")
-}
-
-/// A key without quotes that has a character it may not have, the first of them at `place`.
-fn bad_key(key: &str, span: &Span, place: Option<toml_parser::Span>) -> Fault {
-    let at = place.map_or(span.start, |place| place.start());
-    let wrong = key
-        .get(at - span.start..)
-        .and_then(|rest| rest.chars().next());
-    let fault = Fault::new(
-        "toml::key",
-        "a key is made of letters a to z, digits, - and _",
-        at..at + wrong.map_or(1, char::len_utf8),
-        "",
-    );
-    match wrong {
-        Some(':') => fault.help(format!(
-            "write an equals sign between key and value: {} =",
-            key.trim_end_matches(':')
-        )),
-        Some(wrong) => fault.help(format!("take `{wrong}` away, or put the key in quotes")),
-        None => fault,
-    }
 }

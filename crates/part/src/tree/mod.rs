@@ -10,6 +10,9 @@
 mod assembly;
 mod fields;
 mod grammar;
+mod key;
+mod nested;
+mod recovery;
 mod scalar;
 mod table;
 

@@ -1,17 +1,25 @@
 //! The named sizes: their expressions in the order in which they need each other, and their tolerances.
 
+mod names;
+mod order;
+mod tolerance;
+
+pub(crate) use tolerance::general_tolerance;
+
 use crate::dimension::Dimension;
 use crate::expression::{
-    Expression, FUNCTIONS, Failure, MadeOf, Names, Quantity, Scope, Written, evaluate, parse,
+    Expression, Failure, MadeOf, Names, Quantity, Scope, Written, evaluate, parse,
 };
 use crate::fault::Found;
-use crate::nearest::{listed, nearest, shown};
-use crate::tolerance::tolerance;
+use crate::nearest::shown;
 use crate::tree::{Entry, Fields, Keys, Kind, Table, Value};
 use crate::units::Vocabulary;
 use crate::values::{Values, written_of};
 use crate::{Fault, LengthUnit, Setting, Size, Span};
+use names::{check_name, check_settings};
+use order::in_order;
 use std::collections::HashMap;
+use tolerance::tolerance;
 
 /// Keys of a size that is a table.
 pub(crate) const SIZE: Keys = Keys {
@@ -122,92 +130,6 @@ where
     (values.sizes, read)
 }
 
-fn check_name(entry: &Entry<'_>, found: &mut Found) {
-    let name = &*entry.key;
-    let letter = |c: char| c.is_alphabetic() || c == '_';
-    let right = name.starts_with(letter) && name.chars().all(|c| letter(c) || c.is_ascii_digit());
-    if !right {
-        let mended: String = name
-            .chars()
-            .map(|c| {
-                if letter(c) || c.is_ascii_digit() {
-                    c
-                } else {
-                    '_'
-                }
-            })
-            .collect();
-        let mended = if mended.starts_with(letter) {
-            mended
-        } else {
-            format!("_{mended}")
-        };
-        return found.push(
-            Fault::new(
-                "size::name",
-                "a size's name is made of letters, digits and _, a letter first",
-                entry.key_span(),
-                "",
-            )
-            .help(format!("call it {}", shown(&mended))),
-        );
-    }
-    let drawing = crate::units::Unit::from_word(name, Vocabulary::Drawing).is_some();
-    let taken = if name == "pi" {
-        "the number pi"
-    } else if drawing {
-        "a unit"
-    } else if FUNCTIONS.iter().any(|(function, _)| *function == name) {
-        "a function"
-    } else {
-        return;
-    };
-    found.push(
-        Fault::new(
-            "size::reserved_name",
-            format!("`{name}` is {taken} and cannot be a size too"),
-            entry.key_span(),
-            "",
-        )
-        .help(format!("call it {name}_1, or by what it measures")),
-    );
-}
-
-fn check_settings(settings: &[Setting], sizes: &Sizes<'_>, header: &Span, found: &mut Found) {
-    for (at, setting) in settings.iter().enumerate() {
-        let name = setting.name.as_str();
-        if sizes.index(name).is_none() {
-            let near = nearest(name, sizes.names.iter().copied());
-            let help = match near {
-                Some(near) => format!("did you mean --set {near}=…?"),
-                None if sizes.names.is_empty() => {
-                    "only sizes under [size] can be set, and the file has none".to_owned()
-                }
-                None => format!("the sizes are {}", listed(&sizes.names)),
-            };
-            found.push(
-                Fault::new(
-                    "setting::unknown_size",
-                    format!("--set {}: the file has no such size", shown(name)),
-                    header.clone(),
-                    "",
-                )
-                .help(help),
-            );
-        } else if settings[..at].iter().any(|other| other.name == name) {
-            found.push(
-                Fault::new(
-                    "setting::twice",
-                    format!("--set {name} is given twice"),
-                    header.clone(),
-                    "",
-                )
-                .help("give each size once"),
-            );
-        }
-    }
-}
-
 fn draft<'a, 't>(
     entry: &'a Entry<'t>,
     text: &str,
@@ -303,121 +225,6 @@ fn in_setting(setting: &Setting, fault: Fault, entry: &Entry<'_>) -> Fault {
         labels: Fault::new("", "", entry.key_span(), "this size").labels,
         ..fault
     }
-}
-
-/// The sizes in an order in which each comes after those it needs; those in a circle, and those that need them, are left out.
-fn in_order(drafts: &[Draft<'_, '_>], found: &mut Found) -> Vec<usize> {
-    #[derive(Clone, Copy, PartialEq)]
-    enum State {
-        New,
-        Open,
-        Done,
-    }
-    let needs: Vec<Vec<(usize, Span)>> = drafts
-        .iter()
-        .map(|draft| match &draft.source {
-            Source::Expression(expression, written, setting) => expression
-                .sizes()
-                .map(|(size, at)| {
-                    let place = match setting {
-                        Some(_) => draft.entry.key_span(),
-                        None => written.span(at),
-                    };
-                    (size, place)
-                })
-                .collect(),
-            _ => Vec::new(),
-        })
-        .collect();
-    let mut state = vec![State::New; drafts.len()];
-    let mut order = Vec::with_capacity(drafts.len());
-    let mut in_circle = vec![false; drafts.len()];
-    for root in 0..drafts.len() {
-        if state[root] != State::New {
-            continue;
-        }
-        // A stack of its own, since a chain of sizes may be longer than the program's.
-        let mut path: Vec<(usize, usize)> = vec![(root, 0)];
-        state[root] = State::Open;
-        while let Some((size, next)) = path.last_mut() {
-            let size = *size;
-            let Some((needed, _)) = needs[size].get(*next) else {
-                state[size] = State::Done;
-                path.pop();
-                order.push(size);
-                continue;
-            };
-            *next += 1;
-            match state[*needed] {
-                State::New => {
-                    state[*needed] = State::Open;
-                    path.push((*needed, 0));
-                }
-                State::Done => {}
-                State::Open => {
-                    let from = path
-                        .iter()
-                        .position(|(open, _)| open == needed)
-                        .unwrap_or_default();
-                    let circle = &path[from..];
-                    for (size, _) in circle {
-                        in_circle[*size] = true;
-                    }
-                    found.push(circle_fault(drafts, &needs, circle));
-                }
-            }
-        }
-    }
-    order.retain(|&size| !in_circle[size]);
-    order
-}
-
-fn circle_fault(
-    drafts: &[Draft<'_, '_>],
-    needs: &[Vec<(usize, Span)>],
-    circle: &[(usize, usize)],
-) -> Fault {
-    const NAMED: usize = 12;
-    const SHOWN: usize = 4;
-    let name = |size: usize| shown(&drafts[size].entry.key);
-    let mut names: Vec<String> = circle
-        .iter()
-        .take(NAMED)
-        .map(|&(size, _)| name(size))
-        .collect();
-    if circle.len() > NAMED {
-        names.push("…".to_owned());
-    }
-    names.extend(circle.first().map(|&(size, _)| name(size)));
-    let mut places = circle.iter().filter_map(|&(size, next)| {
-        let (needed, span) = needs[size].get(next.checked_sub(1)?)?;
-        Some((size, *needed, span.clone()))
-    });
-    let first = places.next();
-    let mut fault = match first {
-        Some((size, _, span)) if circle.len() == 1 => Fault::new(
-            "size::circle",
-            format!("the size `{}` needs itself", name(size)),
-            span,
-            "",
-        ),
-        Some((size, needed, span)) => Fault::new(
-            "size::circle",
-            format!("sizes need each other in a circle: {}", names.join(" → ")),
-            span,
-            format!("{} needs {}", name(size), name(needed)),
-        ),
-        None => Fault::new(
-            "size::circle",
-            "sizes need each other in a circle",
-            0..0,
-            "",
-        ),
-    };
-    for (size, needed, span) in places.take(SHOWN) {
-        fault = fault.also(span, format!("{} needs {}", name(size), name(needed)));
-    }
-    fault.help("give one of them a number")
 }
 
 fn value(

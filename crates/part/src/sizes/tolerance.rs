@@ -1,9 +1,9 @@
 //! What a size may differ by.
 
+use super::Sizes;
 use crate::dimension::Dimension;
 use crate::expression::Names;
 use crate::fault::Found;
-use crate::sizes::Sizes;
 use crate::tree::{Kind, Value};
 use crate::values::{Values, dimensioned};
 use crate::{Fault, LengthUnit, Tolerance};
@@ -21,7 +21,7 @@ const GRADES: [&str; 20] = [
 ];
 
 /// The tolerance `value` of a size of `dimension` (`None` where the size has a fault of its own).
-pub(crate) fn tolerance(
+pub(super) fn tolerance(
     value: &Value<'_>,
     dimension: Option<Dimension>,
     values: &Values<'_>,

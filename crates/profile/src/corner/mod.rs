@@ -1,6 +1,15 @@
 //! Fillets and chamfers.
 
-use crate::{Arc, Edge};
+mod chamfer;
+mod largest;
+mod round;
+#[cfg(test)]
+mod tests;
+
+pub use chamfer::chamfer_corner;
+pub use round::round_corner;
+
+use crate::{DVec2, Edge, trig};
 
 /// Two edges with their corner treated. Ends are shared bit for bit: `before`, `corner`, `after` in order of travel.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -28,7 +37,8 @@ pub enum CornerFault {
     /// The fillet or chamfer needs more than the edges have.
     #[error("the edges are too short for it")]
     TooLarge {
-        /// The largest radius or leg that would fit, where it can be told.
+        /// The largest radius that would fit, or the largest leg on an edge that is too short (the smaller one where both
+        /// are), where it can be told.
         largest: Option<f64>,
         /// The edge before the corner is too short or too sharply curved.
         on_before: bool,
@@ -40,66 +50,63 @@ pub enum CornerFault {
     NotALength,
 }
 
-/// Rounds the corner where `before` ends and `after` starts with a fillet of `radius`: the circle that touches both edges
-/// on the inner side of the turn, nearest the corner.
-///
-/// # Errors
-/// See [`CornerFault`].
-pub fn round_corner(before: &Edge, after: &Edge, radius: f64) -> Result<Treated, CornerFault> {
-    if !(radius > 0.0 && radius.is_finite()) {
-        return Err(CornerFault::NotALength);
+/// Below this angle (radians) between two directions there is no corner: a joint that is computed to be smooth is so to
+/// 1e-14 or so, and what a drawing calls a corner turns by far more.
+const SMOOTH: f64 = 1e-9;
+
+/// Points closer than this part of the coordinates are one: an edge of which no more is left is used up. A length that
+/// somebody wrote as the sum of others differs from it by a few roundings of the coordinates.
+const ROUNDING: f64 = 32.0 * f64::EPSILON;
+
+/// Angle from the direction of arrival to that of departure, positive to the left.
+fn turn(before: &Edge, after: &Edge) -> Result<f64, CornerFault> {
+    let turn = trig::angle_between(before.tangent(1.0), after.tangent(0.0));
+    if turn.abs() < SMOOTH {
+        Err(CornerFault::NoCorner)
+    } else if std::f64::consts::PI - turn.abs() < SMOOTH {
+        Err(CornerFault::TurnsBack)
+    } else {
+        Ok(turn)
     }
-    let (arriving, leaving) = (before.tangent(1.0), after.tangent(0.0));
-    let sweep = crate::trig::angle_between(arriving, leaving);
-    let leg = radius * crate::trig::tan(0.5 * sweep.abs());
-    let treated = chamfer_corner(before, after, leg, leg)?;
-    Ok(Treated {
-        corner: Edge::Arc(Arc {
-            start: treated.corner.start(),
-            end: treated.corner.end(),
-            sweep,
-        }),
-        ..treated
-    })
 }
 
-/// Cuts the corner where `before` ends and `after` starts by a straight chamfer. A leg is the straight distance from the
-/// corner to the chamfer's end, on curved edges too.
-///
-/// # Errors
-/// See [`CornerFault`].
-pub fn chamfer_corner(
-    before: &Edge,
-    after: &Edge,
-    leg_before: f64,
-    leg_after: f64,
-) -> Result<Treated, CornerFault> {
-    if !(leg_before > 0.0 && leg_after > 0.0 && leg_before.is_finite() && leg_after.is_finite()) {
-        return Err(CornerFault::NotALength);
+/// The distance below which points of these edges count as one.
+fn rounding(before: &Edge, after: &Edge) -> f64 {
+    let largest = [before.start(), before.end(), after.end()]
+        .into_iter()
+        .map(|point| point.abs().max_element())
+        .fold(0.0, f64::max);
+    ROUNDING * largest
+}
+
+/// How much of the two edges a treatment takes: parameter and point on each. The parameter is exactly 0 on the edge
+/// before, 1 on the edge after, where it takes all of it.
+#[derive(Debug, Clone, Copy)]
+struct Cut {
+    before: (f64, DVec2),
+    after: (f64, DVec2),
+}
+
+impl Cut {
+    /// The treated edges, with what `corner` makes between the two points.
+    fn treat(
+        self,
+        before: &Edge,
+        after: &Edge,
+        corner: impl FnOnce(DVec2, DVec2) -> Edge,
+    ) -> Treated {
+        let ((t_before, start), (t_after, end)) = (self.before, self.after);
+        let start = if t_before == 0.0 {
+            before.start()
+        } else {
+            start
+        };
+        let end = if t_after == 1.0 { after.end() } else { end };
+        Treated {
+            before: (t_before > 0.0)
+                .then(|| before.part(0.0, t_before).with_ends(before.start(), start)),
+            corner: corner(start, end),
+            after: (t_after < 1.0).then(|| after.part(t_after, 1.0).with_ends(end, after.end())),
+        }
     }
-    let (length_before, length_after) = (before.chord().length(), after.chord().length());
-    let (on_before, on_after) = (leg_before > length_before, leg_after > length_after);
-    if on_before || on_after {
-        return Err(CornerFault::TooLarge {
-            largest: None,
-            on_before,
-            on_after,
-        });
-    }
-    let corner = before.end();
-    let start = corner - before.tangent(1.0) * leg_before;
-    let end = corner + after.tangent(0.0) * leg_after;
-    Ok(Treated {
-        before: Some(
-            before
-                .part(0.0, 1.0 - leg_before / length_before)
-                .with_ends(before.start(), start),
-        ),
-        corner: Edge::line(start, end),
-        after: Some(
-            after
-                .part(leg_after / length_after, 1.0)
-                .with_ends(end, after.end()),
-        ),
-    })
 }

@@ -64,6 +64,22 @@ fn missing_paths(name: &str) -> Vec<String> {
 }
 
 #[test]
+fn the_part_files_in_the_readme_weigh_what_they_expect() {
+    let readme = document("README.md");
+    let files: Vec<&str> = readme
+        .split("```toml\n")
+        .skip(1)
+        .filter_map(|rest| rest.split("```").next())
+        .collect();
+    assert!(!files.is_empty());
+    for text in files {
+        let expected = checks::study(text).record.expect;
+        assert!(!expected.is_empty());
+        assert!(expected.iter().all(|line| line.holds), "{expected:#?}");
+    }
+}
+
+#[test]
 fn every_path_in_the_documents_exists() {
     assert_eq!(missing_paths("README.md"), [""; 0]);
     assert_eq!(missing_paths("DEVELOPERS.md"), [""; 0]);

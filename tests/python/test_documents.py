@@ -23,7 +23,7 @@ def commands():
                 yield words[1:]
 
 
-@pytest.mark.parametrize("words", commands(), ids=" ".join)
+@pytest.mark.parametrize("words", list(commands()), ids=" ".join)
 def test_command_of_the_readme(words, tmp_path):
     (tmp_path / "examples").symlink_to(TOP / "examples")
     done = subprocess.run(

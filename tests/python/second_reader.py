@@ -69,7 +69,8 @@ class Values:
             factor = UNIT[match[2]] / UNIT[self.unit] if match[2] != "deg" else 1.0
             return f"({match[1]} * {factor!r})"
 
-        text = re.sub(r"([\d.]+)\s*(mm|cm|m|in|ft|deg)\b", with_unit, written)
+        # "3/4 in" is three quarters of an inch.
+        text = re.sub(r"([\d.]+(?:\s*/\s*[\d.]+)?)\s*(mm|cm|m|in|ft|deg)\b", with_unit, written)
         # A leading sign binds less than a power in both notations.
         return self._of(ast.parse(text.replace("^", "**"), mode="eval").body)
 
@@ -90,10 +91,11 @@ class Values:
 
 @dataclass(frozen=True)
 class Edge:
-    """The curve `point` with its derivative, from parameter `start` to `end`."""
+    """The curve `point` with its first and second derivative, from parameter `start` to `end`."""
 
     point: Callable
     derivative: Callable
+    second: Callable
     start: float = 0.0
     end: float = 1.0
     name: str | None = None
@@ -108,7 +110,7 @@ class Edge:
 
 
 def line(a, b):
-    return Edge(lambda t: a + (b - a) * t, lambda t: (b - a) + 0 * t)
+    return Edge(lambda t: a + (b - a) * t, lambda t: (b - a) + 0 * t, lambda t: 0 * t)
 
 
 def arc(centre, a, sweep):
@@ -116,6 +118,7 @@ def arc(centre, a, sweep):
     return Edge(
         lambda t: centre + radius * np.exp(1j * sweep * t),
         lambda t: 1j * sweep * radius * np.exp(1j * sweep * t),
+        lambda t: -(sweep**2) * radius * np.exp(1j * sweep * t),
     )
 
 
@@ -140,18 +143,22 @@ def quarter_ellipse(a, b, along_r):
     return Edge(
         lambda t: centre + first * np.cos(quarter * t) + second * np.sin(quarter * t),
         lambda t: quarter * (second * np.cos(quarter * t) - first * np.sin(quarter * t)),
+        lambda t: -(quarter**2) * (first * np.cos(quarter * t) + second * np.sin(quarter * t)),
     )
 
 
 def bezier(*points):
-    degree = len(points) - 1
-
-    def value(points, t):
+    def curve(points):
         n = len(points) - 1
-        return sum(math.comb(n, k) * (1 - t) ** (n - k) * t**k * p for k, p in enumerate(points))
+        return lambda t: sum(
+            math.comb(n, k) * (1 - t) ** (n - k) * t**k * p for k, p in enumerate(points)
+        )
 
-    differences = [degree * (q - p) for p, q in zip(points, points[1:])]
-    return Edge(lambda t: value(points, t), lambda t: value(differences, t))
+    def differences(points):
+        return [(len(points) - 1) * (q - p) for p, q in zip(points, points[1:])]
+
+    first = differences(points)
+    return Edge(curve(points), curve(first), curve(differences(first)))
 
 
 def meet(f, g, s, t):
@@ -302,20 +309,24 @@ def chain(value, steps, closed):
 
 
 def parallel(edge, distance):
-    h = 1e-5
-    beside = edge.beside(distance)
+    """The edge at `distance` to the left; only its point and derivative are asked for."""
 
     def derivative(t):
-        # Central differences of fourth order: the curve at a distance is smooth, and so is what is integrated along it.
-        near, far = beside(t + h) - beside(t - h), beside(t + 2 * h) - beside(t - 2 * h)
-        return (8 * near - far) / (12 * h)
+        first = edge.derivative(t)
+        curvature = (first.conjugate() * edge.second(t)).imag / np.abs(first) ** 3
+        return first * (1 - distance * curvature)
 
-    return Edge(beside, derivative, edge.start, edge.end)
+    return replace(edge, point=edge.beside(distance), derivative=derivative)
 
 
 def reverse(edge):
     span = edge.start + edge.end
-    return replace(edge, point=lambda t: edge.point(span - t), derivative=lambda t: -edge.derivative(span - t))
+    return replace(
+        edge,
+        point=lambda t: edge.point(span - t),
+        derivative=lambda t: -edge.derivative(span - t),
+        second=lambda t: edge.second(span - t),
+    )
 
 
 def wall(value, table):

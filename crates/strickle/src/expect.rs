@@ -1,6 +1,6 @@
 //! What the drawing says of the finished part, judged.
 
-use crate::figures::{Kind, Scale};
+use crate::figures::{Kind, Scale, System};
 use crate::record::{Exact, Judgement, Verdict};
 use part::{Expectation, Expected, Part};
 
@@ -39,6 +39,7 @@ fn judged(expectation: &Expectation, found: f64) -> Judgement {
         difference,
         holds: lower - slack <= difference && difference <= upper + slack,
         kind,
+        system: System::of_text(&expectation.written),
         written: expectation.written.clone(),
     }
 }
@@ -46,12 +47,12 @@ fn judged(expectation: &Expectation, found: f64) -> Judgement {
 /// Why a judgement is NO, in words.
 fn reason(judgement: &Judgement) -> Option<String> {
     let (beyond, side) = judgement.excess()?;
-    let scale = Scale::of(judgement.kind, judgement.found);
-    let beyond = Scale::of(judgement.kind, beyond).text(beyond);
+    let scale = |size| Scale::of_system(judgement.kind, judgement.system, size);
     Some(format!(
-        "{} is {}, {beyond} {side} the limit of {}",
+        "{} is {}, {} {side} the limit of {}",
         judgement.quantity,
-        scale.text(judgement.found),
+        scale(judgement.found).text(judgement.found),
+        scale(beyond).text(beyond),
         judgement.written
     ))
 }

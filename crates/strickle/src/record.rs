@@ -4,7 +4,7 @@
 //! starts in the half-plane y = 0, x >= 0 and turns right-handed about +z. `None` is `null`: it does not apply. Keys
 //! keep their names and order for good; new ones are added behind the old.
 
-use crate::figures::Kind;
+use crate::figures::{Kind, System};
 use serde::Serialize;
 
 /// A point or vector in space.
@@ -298,6 +298,9 @@ pub struct Judgement {
     /// What it is, for people.
     #[serde(skip)]
     pub kind: Kind,
+    /// The units that it is written in, for people.
+    #[serde(skip)]
+    pub system: System,
     /// What is wanted, as written.
     pub written: String,
 }

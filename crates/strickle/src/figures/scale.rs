@@ -58,9 +58,19 @@ impl Scale {
         Self { unit, decimals }
     }
 
+    /// The scale for a column of figures (SI), in metric units: that of the largest, with decimals enough for the
+    /// smallest to say something.
+    pub fn of_column(kind: Kind, values: impl IntoIterator<Item = f64>) -> Self {
+        Self::of_system_column(kind, System::Metric, values)
+    }
+
     /// The scale for a column of figures (SI): that of the largest, with decimals enough for the smallest to say
     /// something.
-    pub fn of_column(kind: Kind, values: impl IntoIterator<Item = f64>) -> Self {
+    pub fn of_system_column(
+        kind: Kind,
+        system: System,
+        values: impl IntoIterator<Item = f64>,
+    ) -> Self {
         let sizes: Vec<f64> = values
             .into_iter()
             .map(f64::abs)
@@ -68,7 +78,7 @@ impl Scale {
             .collect();
         let largest = sizes.iter().copied().fold(0.0, f64::max);
         let smallest = sizes.iter().copied().fold(largest, f64::min);
-        let scale = Self::of(kind, largest);
+        let scale = Self::of_system(kind, system, largest);
         let (Decimals::Fixed(decimals), Some(power)) =
             (scale.decimals, power(smallest / scale.unit.size))
         else {

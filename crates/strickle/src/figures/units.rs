@@ -27,6 +27,23 @@ pub enum System {
     Inch,
 }
 
+impl System {
+    /// The family of the units that `written` is in: `7 lb +- 2 %` is in pounds.
+    pub fn of_text(written: &str) -> Self {
+        let inch =
+            |word: &str| ["in", "ft", "lb", "oz"].contains(&word.trim_end_matches(['2', '3']));
+        // `27lb` is a number and a unit.
+        let mut words = written
+            .split(|c: char| !c.is_alphanumeric())
+            .map(|word| word.trim_start_matches(|c: char| c.is_ascii_digit()));
+        if words.any(inch) {
+            Self::Inch
+        } else {
+            Self::Metric
+        }
+    }
+}
+
 /// A unit of a kind.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Unit {
@@ -153,6 +170,21 @@ mod tests {
         }
         assert_eq!(suited(Kind::Mass, System::Inch, 10.0).name, "lb");
         assert_eq!(suited(Kind::Mass, System::Inch, 0.1).name, "oz");
+    }
+
+    #[test]
+    fn the_family_is_that_of_the_text() {
+        for written in [
+            "7 lb +- 2 %",
+            "27lb +- 1lb",
+            "12 in3 +- 1 %",
+            "1.5 ft +- 1/8 in",
+        ] {
+            assert_eq!(System::of_text(written), System::Inch, "{written}");
+        }
+        for written in ["12.4 kg +- 2 %", "101 mm", "inertia", "5 min", ""] {
+            assert_eq!(System::of_text(written), System::Metric, "{written}");
+        }
     }
 
     #[test]

@@ -1,15 +1,22 @@
 //! Signed area of loops.
 
-use crate::{Edge, Loop, trig};
+use crate::{Bounds, Edge, Loop, trig};
 
 impl Loop {
     /// Area enclosed, m2: positive where the loop runs counter-clockwise (r to the right, z up).
     ///
     /// # Accuracy
-    /// The polygon of the chords plus what lies between each chord and its edge, about the middle of the loop's box, summed
-    /// with compensation: a few units in the last place of the area of that box.
+    /// The polygon of the chords plus what lies between each chord and its edge, about the middle of the corners' box,
+    /// summed with compensation: a few units in the last place of the area of the loop's box.
     pub fn signed_area(&self) -> f64 {
-        let origin = self.bounds().centre();
+        let corners = self
+            .edges()
+            .iter()
+            .map(|edge| Bounds::of_point(edge.start()));
+        let origin = corners
+            .reduce(Bounds::union)
+            .expect("a loop has at least two edges")
+            .centre();
         let mut sum = 0.0_f64;
         let mut lost = 0.0_f64;
         for edge in self.edges() {

@@ -72,6 +72,30 @@ fn arc_turnings(arc: Arc) -> impl Iterator<Item = f64> {
         .filter(|t| *t > 0.0 && *t < 1.0)
 }
 
+/// Points whose convex hulls hold the edge: those of its pieces, and if it is curved each of them cut into `parts`.
+pub(crate) fn hulls(edge: &Edge, parts: u32, mut each: impl FnMut(Hull)) {
+    let parts = if matches!(edge, Edge::Line(_)) {
+        1
+    } else {
+        parts
+    };
+    pieces(edge, |piece| {
+        let [from, to] = piece.t;
+        let mut start = piece.ends[0];
+        for k in 1..=parts {
+            let t = |k: u32| from + (to - from) * (f64::from(k) / f64::from(parts));
+            let (t, end) = if k == parts {
+                ([t(k - 1), to], piece.ends[1])
+            } else {
+                ([t(k - 1), t(k)], edge.point(t(k)))
+            };
+            let ends = [start, end];
+            each(Piece { t, ends }.hull(edge));
+            start = end;
+        }
+    });
+}
+
 /// Points whose convex hull holds a piece.
 #[derive(Debug, Clone, Copy)]
 pub(crate) struct Hull {
@@ -85,7 +109,8 @@ impl Hull {
         &self.points[..self.count]
     }
 
-    fn of<const N: usize>(given: [DVec2; N]) -> Self {
+    /// The hull of these points, two to four.
+    pub(crate) fn of<const N: usize>(given: [DVec2; N]) -> Self {
         let mut points = [given[0]; 4];
         points[..N].copy_from_slice(&given);
         Self { points, count: N }

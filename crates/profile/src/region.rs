@@ -1,5 +1,6 @@
 //! The section of one body: a loop less the loops inside it.
 
+use crate::validity::checked;
 use crate::{Bounds, Edge, Loop, RegionFault};
 
 /// The section of one body: the area inside the outer loop less the voids.
@@ -18,16 +19,22 @@ impl Region {
     /// # Errors
     /// Every fault found, in order of place; of a loop with very many, the first ones.
     pub fn new(outer: Loop, voids: Vec<Loop>) -> Result<Self, Vec<RegionFault>> {
-        let oriented = |outline: Loop, sign: f64| {
-            if outline.signed_area() * sign < 0.0 {
-                outline.reversed()
-            } else {
+        let loops: Vec<&Loop> = std::iter::once(&outer).chain(&voids).collect();
+        let areas = checked(&loops)?;
+        let oriented = |outline: Loop, runs_well: bool| {
+            if runs_well {
                 outline
+            } else {
+                outline.reversed()
             }
         };
         Ok(Self {
-            outer: oriented(outer, 1.0),
-            voids: voids.into_iter().map(|void| oriented(void, -1.0)).collect(),
+            outer: oriented(outer, areas[0] > 0.0),
+            voids: voids
+                .into_iter()
+                .zip(&areas[1..])
+                .map(|(void, area)| oriented(void, *area < 0.0))
+                .collect(),
         })
     }
 

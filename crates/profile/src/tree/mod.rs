@@ -5,9 +5,10 @@
 
 mod oriented;
 
+use crate::left_of;
 use crate::piece::Hull;
 use glam::DVec2;
-use oriented::Oriented;
+use oriented::{Oriented, into};
 use std::ops::ControlFlow;
 
 /// A tree over items that are known by their index.
@@ -98,13 +99,23 @@ impl Tree {
     }
 
     /// Calls `each` with the items that the ray from `p` to the right may meet.
-    pub(crate) fn right_of(&self, p: DVec2, mut each: impl FnMut(u32)) {
+    pub(crate) fn right_of(&self, p: DVec2, each: impl FnMut(u32)) {
+        self.walk(|bounds| bounds.may_meet_ray_right_of(p), each);
+    }
+
+    /// Calls `each` with the items whose boxes contain `p`.
+    pub(crate) fn containing(&self, p: DVec2, each: impl FnMut(u32)) {
+        self.walk(|bounds| bounds.distance_squared(p) == 0.0, each);
+    }
+
+    /// Calls `each` with the items that can be reached through boxes that are `wanted`.
+    fn walk(&self, wanted: impl Fn(&Oriented) -> bool, mut each: impl FnMut(u32)) {
         let mut waiting = vec![0];
         if self.nodes.is_empty() {
             return;
         }
         while let Some(node) = waiting.pop() {
-            if self.bounds(node).may_meet_ray_right_of(p) {
+            if wanted(self.bounds(node)) {
                 match self.children(node) {
                     Some(children) => waiting.extend(children),
                     None => each(self.item(node)),
@@ -182,7 +193,8 @@ impl Builder<'_> {
         let points = items
             .iter()
             .flat_map(|&item| hulls[item as usize].points().iter().copied());
-        let bounds = Oriented::around(points, self.direction(items), self.margin);
+        let direction = direction(items.iter().map(|&item| &hulls[item as usize]));
+        let bounds = Oriented::around(points, direction, self.margin);
         let node = self.nodes.len();
         self.nodes.push(Node {
             bounds,
@@ -192,17 +204,11 @@ impl Builder<'_> {
         if items.len() == 1 {
             return;
         }
-        let (min, max) = items
-            .iter()
-            .map(|&item| self.centres[item as usize])
-            .fold((DVec2::INFINITY, DVec2::NEG_INFINITY), |(min, max), p| {
-                (min.min(p), max.max(p))
-            });
-        let axis = usize::from(max.y - min.y > max.x - min.x);
+        let axis = self.widest(items, bounds.direction());
         let centres = &self.centres;
         let half = items.len() / 2;
         items.select_nth_unstable_by(half, |&a, &b| {
-            let of = |item: u32| centres[item as usize][axis];
+            let of = |item: u32| centres[item as usize].dot(axis);
             of(a).total_cmp(&of(b)).then(a.cmp(&b))
         });
         let (left, right) = items.split_at_mut(half);
@@ -213,22 +219,47 @@ impl Builder<'_> {
         self.build(right);
     }
 
-    /// The direction that the items mostly have, weighted by their length squared; any one where they have none.
-    fn direction(&self, items: &[u32]) -> DVec2 {
-        // Opposite directions are one: angles are doubled for the sum, and the sum's is halved.
-        let sum: DVec2 = items
-            .iter()
-            .map(|&item| {
-                let points = self.hulls[item as usize].points();
-                let chord = points[points.len() - 1] - points[0];
-                chord.rotate(chord)
-            })
-            .sum();
-        let doubled = sum.normalize_or(DVec2::X);
-        let cos = (0.5 * (1.0 + doubled.x)).max(0.0).sqrt();
-        let sin = (0.5 * (1.0 - doubled.x)).max(0.0).sqrt();
-        DVec2::new(cos, sin.copysign(doubled.y)).normalize()
+    /// Of `direction` and the one across, that along which the items are spread more widely than they are long: halved
+    /// there, the halves overlap least.
+    fn widest(&self, items: &[u32], direction: DVec2) -> DVec2 {
+        let [mut least, mut most] = [DVec2::INFINITY, DVec2::NEG_INFINITY];
+        let mut length = DVec2::ZERO;
+        for &item in items {
+            let centre = into(direction, self.centres[item as usize]);
+            least = least.min(centre);
+            most = most.max(centre);
+            length += into(direction, chord(&self.hulls[item as usize])).abs();
+        }
+        let spread = (most - least) * items.len() as f64;
+        // spread.x / length.x against spread.y / length.y.
+        if spread.x * length.y >= spread.y * length.x {
+            direction
+        } else {
+            left_of(direction)
+        }
     }
+}
+
+/// The direction that the hulls mostly have, weighted by their length squared; any one where they have none.
+fn direction<'a>(hulls: impl Iterator<Item = &'a Hull>) -> DVec2 {
+    // Opposite directions are one: angles are doubled for the sum, and the sum's is halved.
+    let sum: DVec2 = hulls.map(|hull| chord(hull).rotate(chord(hull))).sum();
+    let doubled = sum.normalize_or(DVec2::X);
+    let cos = (0.5 * (1.0 + doubled.x)).max(0.0).sqrt();
+    let sin = (0.5 * (1.0 - doubled.x)).max(0.0).sqrt();
+    DVec2::new(cos, sin.copysign(doubled.y)).normalize()
+}
+
+/// A turned box that holds all the hulls, at least one, as a hull of its own.
+pub(crate) fn turned_box(hulls: &[Hull]) -> Hull {
+    let points = hulls.iter().flat_map(Hull::points).copied();
+    Hull::of(Oriented::around(points, direction(hulls.iter()), 0.0).corners())
+}
+
+/// From the first point to the last.
+fn chord(hull: &Hull) -> DVec2 {
+    let points = hull.points();
+    points[points.len() - 1] - points[0]
 }
 
 fn centre(hull: &Hull) -> DVec2 {

@@ -47,6 +47,17 @@ impl Oriented {
         best
     }
 
+    /// Unit vector along its first side.
+    pub(crate) fn direction(&self) -> DVec2 {
+        self.along
+    }
+
+    /// Its corners, of which the first and the last are the ends of a side along its direction.
+    pub(crate) fn corners(&self) -> [DVec2; 4] {
+        let at = |x: f64, y: f64| self.centre + self.along.rotate(DVec2::new(x, y) * self.half);
+        [at(-1.0, -1.0), at(-1.0, 1.0), at(1.0, 1.0), at(1.0, -1.0)]
+    }
+
     /// Square of the distance from `p`, 0 inside.
     pub(crate) fn distance_squared(&self, p: DVec2) -> f64 {
         let local = into(self.along, p - self.centre).abs() - self.half;
@@ -99,6 +110,6 @@ impl Oriented {
 }
 
 /// `p` in a frame whose first axis is the unit vector `along`.
-fn into(along: DVec2, p: DVec2) -> DVec2 {
+pub(super) fn into(along: DVec2, p: DVec2) -> DVec2 {
     DVec2::new(along.dot(p), along.perp_dot(p))
 }

@@ -151,6 +151,18 @@ impl RegionFault {
         }
     }
 
+    /// The loops concerned, one or two.
+    pub(super) fn loops(&self) -> impl Iterator<Item = usize> {
+        let of_edges = self.edges().map(|edge| edge.loop_index);
+        std::iter::once(self.loop_index()).chain(of_edges)
+    }
+
+    /// What faults are ordered by: the loop and the edge, the first of two.
+    pub(super) fn order(&self) -> (usize, usize) {
+        let edge = self.edges().next().map_or(0, |edge| edge.edge);
+        (self.loop_index(), edge)
+    }
+
     /// The edges concerned, none to two.
     pub fn edges(&self) -> impl Iterator<Item = EdgeRef> {
         let (first, second) = match *self {

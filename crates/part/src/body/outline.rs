@@ -5,7 +5,7 @@ use crate::outline::{Coordinate, Outline};
 use crate::steps::{CENTRE, EdgeCount, Use, steps, target};
 use crate::tree::{Fields, Keys, Kind, Value};
 use crate::values::Values;
-use crate::{Fault, LengthUnit, Span};
+use crate::{Fault, Span};
 
 /// Keys of a whole circle.
 pub(crate) const CIRCLE: Keys = Keys {
@@ -84,7 +84,7 @@ pub(super) fn outline(
     match &*entry.key {
         "circle" => circle(value, values, found),
         "svg" => svg(value, values, found),
-        _ => csv(value, values, found),
+        _ => csv(value, found),
     }
 }
 
@@ -153,12 +153,11 @@ fn svg(value: &Value<'_>, values: &Values<'_>, found: &mut Found) -> Option<Outl
     })
 }
 
-fn csv(value: &Value<'_>, values: &Values<'_>, found: &mut Found) -> Option<Outline> {
+fn csv(value: &Value<'_>, found: &mut Found) -> Option<Outline> {
     let fields = Fields::open(value, &CSV, found)?;
     let entry = fields.get("csv")?;
     Some(Outline::Csv {
         file: file_name(&entry.value, "`csv`", found)?,
-        unit: values.unit.to(LengthUnit::Metre, 1.0).of(1.0),
         span: entry.value.span(),
     })
 }

@@ -1,9 +1,11 @@
 //! From the steps of an outline to a closed loop of edges, and from loops to a region.
 
+mod beside;
 mod bodies;
 mod chain;
 mod circle;
 mod corners;
+mod csv;
 mod draw;
 mod origins;
 mod region;
@@ -12,6 +14,7 @@ mod settle;
 mod slope;
 mod step;
 mod steps;
+mod svg;
 mod walk;
 mod wall;
 mod wording;
@@ -46,14 +49,31 @@ pub fn build(
     neighbours: &dyn Neighbours,
     faults: &mut Vec<Fault>,
 ) -> Option<Built> {
-    let _ = neighbours;
     let wording = Wording { unit };
     match outline {
         Outline::Steps(steps, span) => steps::closed(steps, span, words_prefix, wording, faults),
         Outline::Circle { r, z, radius, span } => {
             circle::circle([*r, *z], *radius, span, words_prefix, wording, faults)
         }
-        Outline::Svg { .. } | Outline::Csv { .. } => None,
+        Outline::Svg {
+            file,
+            id,
+            axis_x,
+            scale,
+            span,
+        } => {
+            let drawing = svg::Drawing {
+                file,
+                id: id.as_deref(),
+                axis_x: *axis_x,
+                scale: *scale,
+                span,
+            };
+            svg::outline(&drawing, words_prefix, wording, neighbours, faults)
+        }
+        Outline::Csv { file, span } => {
+            csv::outline(file, span, words_prefix, wording, neighbours, faults)
+        }
         Outline::Wall {
             line,
             thickness,

@@ -150,8 +150,6 @@ pub enum Outline {
     Csv {
         /// The file, as written.
         file: String,
-        /// Metres a number of the file.
-        unit: f64,
         /// Place of the file name.
         span: Span,
     },

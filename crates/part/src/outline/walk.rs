@@ -128,7 +128,12 @@ pub(super) fn in_range(point: DVec2, step: &Step, wording: Wording) -> Result<DV
     if point.abs().max_element() <= LARGEST {
         return Ok(point);
     }
-    Err(Fault::new(
+    Err(out_of_range(step, wording))
+}
+
+/// `step` leads too far out.
+pub(super) fn out_of_range(step: &Step, wording: Wording) -> Fault {
+    Fault::new(
         "step::out_of_range",
         format!(
             "{} leads farther out than can be computed with, {}",
@@ -138,7 +143,7 @@ pub(super) fn in_range(point: DVec2, step: &Step, wording: Wording) -> Result<DV
         step.span.clone(),
         "",
     )
-    .help("look at the unit and at the powers of ten"))
+    .help("look at the unit and at the powers of ten")
 }
 
 fn past_axis(step: &Step, point: DVec2, wording: Wording) -> Fault {

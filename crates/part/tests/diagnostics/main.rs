@@ -22,12 +22,12 @@ struct Case {
     shown: String,
 }
 
-/// No file stands beside the part file.
-struct Nothing;
+/// The files in `beside` stand beside the part file.
+struct Beside;
 
-impl Neighbours for Nothing {
-    fn read(&self, _: &str) -> std::io::Result<Vec<u8>> {
-        Err(std::io::ErrorKind::NotFound.into())
+impl Neighbours for Beside {
+    fn read(&self, file: &str) -> std::io::Result<Vec<u8>> {
+        std::fs::read(folder().with_file_name("beside").join(file))
     }
 }
 
@@ -54,7 +54,7 @@ fn cases(text: &str) -> Vec<Case> {
 fn faults(case: &Case) -> Faults {
     let (text, settings) = frames::whole(&case.title, &case.piece);
     let settings: Vec<Setting> = settings;
-    part::read("bell.toml", text.as_bytes(), &settings, &Nothing)
+    part::read("bell.toml", text.as_bytes(), &settings, &Beside)
         .map(|_| ())
         .expect_err(&case.title)
 }

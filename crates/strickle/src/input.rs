@@ -71,8 +71,8 @@ impl Neighbours for Folder {
     }
 }
 
-/// The bytes of the file at `path`; `None` where they are too many.
-fn contents(path: &Path) -> io::Result<Option<Vec<u8>>> {
+/// The bytes of the file at `path`; `None` where they are more than 16 MiB.
+pub(crate) fn contents(path: &Path) -> io::Result<Option<Vec<u8>>> {
     let file = File::open(path)?;
     let length = file.metadata()?.len();
     if length > LARGEST_FILE {

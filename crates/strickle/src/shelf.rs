@@ -1,6 +1,7 @@
 //! The table of materials with the user's own.
 
 use crate::failure::Failure;
+use crate::input;
 use part::{Fault, Faults};
 use shop::Table;
 use std::env;
@@ -31,12 +32,17 @@ pub(crate) fn table() -> Result<Table, Failure> {
     let Some(file) = file() else {
         return Ok(table);
     };
-    let text = match std::fs::read(&file) {
-        Ok(bytes) => String::from_utf8_lossy(&bytes).into_owned(),
+    let name = file.display().to_string();
+    let bytes = match input::contents(&file) {
+        Ok(Some(bytes)) => bytes,
+        Ok(None) => return Err(Failure::usage(format!("{name} is larger than 16 MiB"))),
         Err(source) if source.kind() == io::ErrorKind::NotFound => return Ok(table),
         Err(source) => return Err(Failure::Read { file, source }),
     };
-    let name = file.display().to_string();
+    let text = String::from_utf8(bytes).map_err(|error| {
+        let place = error.utf8_error().valid_up_to();
+        Failure::usage(format!("{name} is not UTF-8 from byte {place} on"))
+    })?;
     table.extended(&text, &name).map_err(|faults| {
         let faults = faults.into_iter().map(of_the_text).collect();
         Failure::Part(

@@ -105,3 +105,32 @@ fn a_range_of_the_density_is_a_range_of_the_mass() {
     let ran = folder.run(&["weigh", "disc.toml"]);
     assert!(ran.out.contains("from 1.3509 to 1.4137 kg"), "{}", ran.out);
 }
+
+#[test]
+fn a_table_of_the_users_own_that_is_no_text_is_told() {
+    let folder = Folder::new();
+    folder.write("settings/materials.toml", b"# caf\xe9\n");
+    let ran = folder.run(&["materials"]);
+    assert_eq!(ran.status, Some(2));
+    assert!(ran.err.contains("not UTF-8 from byte 5 on"), "{}", ran.err);
+}
+
+#[test]
+fn the_listing_says_where_the_users_own_go() {
+    let folder = Folder::new();
+    let place = folder.file("settings/materials.toml");
+    let place = place.to_str().unwrap();
+    assert!(
+        folder
+            .run(&["materials"])
+            .out
+            .contains(&format!("{place} (not there yet)"))
+    );
+    folder.write("settings/materials.toml", OWN);
+    assert!(
+        folder
+            .run(&["materials"])
+            .out
+            .ends_with(&format!("{place}\n"))
+    );
+}

@@ -15,6 +15,10 @@ const LEAST_TURN_COSINE: f64 = 0.695;
 /// a cusp, where all of the turn sits in one point).
 const MOST_HALVINGS: u32 = 50;
 
+/// An edge is cut into no more pieces than this and what then is left: a cusp's tip takes two a halving, all other turns of
+/// a legal edge a dozen.
+const MOST_PIECES: usize = 200;
+
 /// A Bezier's derivative counts as zero below this part of its longest control leg. Where it is that small the curve has
 /// a cusp or an end control point on its end, and the direction is that of the second derivative: within the stretch
 /// where this is not yet true the curve moves by the square of this number only.
@@ -147,8 +151,9 @@ impl Spiral {
         let [from, to] = self.direction;
         let turns_little = [(from, to), (from, direction), (direction, to)]
             .into_iter()
-            .all(|(p, q)| p.dot(q) >= LEAST_TURN_COSINE);
-        if turns_little || halvings == 0 || middle <= self.t[0] || middle >= self.t[1] {
+            .all(|(p, q)| p.dot(q) >= LEAST_TURN_COSINE || p.dot(q).is_nan());
+        let enough = pieces.len() >= MOST_PIECES;
+        if turns_little || enough || halvings == 0 || middle <= self.t[0] || middle >= self.t[1] {
             pieces.push(self);
             return;
         }

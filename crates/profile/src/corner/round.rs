@@ -91,7 +91,10 @@ fn between_curves(
         fillet.cut.after.1 += corner;
         return Ok(fillet);
     }
-    let best = largest(radius, fit);
+    // A circle whose legs, by the angle at the corner, are much longer than the edges will not fit.
+    let longest = before.chord().length().max(after.chord().length());
+    let hopeless = HOPELESS * longest / trig::tan(0.5 * turn.abs());
+    let best = largest(radius.min(hopeless), fit);
     // The edge of which the largest fillet leaves nothing is the one that is too short. Where it leaves some of both,
     // one is too sharply curved for more.
     let left_over = best.map(|(_, fillet)| (fillet.cut.before.0, 1.0 - fillet.cut.after.0));
@@ -114,6 +117,10 @@ fn between_curves(
         on_after,
     })
 }
+
+/// A fillet is not looked for where its legs between straight edges would be this many times as long as the longer edge's
+/// chord: no bend of the edges makes up for that.
+const HOPELESS: f64 = 64.0;
 
 /// Less than this part of an edge beyond the largest fillet, which is known to ten digits, is nothing.
 const USED_UP: f64 = 1e-6;

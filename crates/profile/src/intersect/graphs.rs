@@ -18,9 +18,9 @@ use crate::spiral::{Spiral, spirals};
 use crate::{Bounds, Edge, left_of};
 use glam::DVec2;
 
-/// A pair of spirals is cut into at most this many stretches. Fourth-order contact takes a thousand; what is left then is
-/// looked at once and not cut further.
-const MOST_STRETCHES: usize = 4096;
+/// Two edges are looked at in at most this many stretches of their spirals. Fourth-order contact takes a thousand; what is
+/// left then is looked at once and not cut further.
+pub(super) const MOST_STRETCHES: usize = 4096;
 
 /// A vertical distance is at most 1/cos(70 degrees) = 2.9 times the distance.
 const STEEPEST: f64 = 3.0;
@@ -45,34 +45,38 @@ pub(super) fn contacts(a: &Edge, b: &Edge, within: f64, found: &mut Contacts) {
     .centre();
     let moved = [a.moved(-origin), b.moved(-origin)];
     let pieces = moved.each_ref().map(spirals);
+    let mut left_over = MOST_STRETCHES;
+    let mut report = |t: [f64; 2], passes| {
+        found.add(Contact {
+            t_a: t[0],
+            t_b: t[1],
+            point: a.point(t[0]),
+            passes,
+        });
+    };
     for piece_a in &pieces[0] {
         let box_a = piece_a.bounds().grown(within);
         for piece_b in &pieces[1] {
             if box_a.meets(piece_b.bounds()) {
-                piece_contacts(
-                    &moved,
-                    [piece_a, piece_b],
-                    within,
-                    &mut |t: [f64; 2], passes| {
-                        found.add(Contact {
-                            t_a: t[0],
-                            t_b: t[1],
-                            point: a.point(t[0]),
-                            passes,
-                        });
-                    },
-                );
+                let pair = [piece_a, piece_b];
+                piece_contacts(&moved, pair, within, &mut left_over, &mut report);
             }
         }
     }
 }
 
-/// Reports the parameters of all contacts of two spirals of two edges, and where it can tell whether they pass there.
-pub(super) fn piece_contacts(edges: &[Edge; 2], pieces: [&Spiral; 2], within: f64, report: Report) {
-    let Some(graphs) = Graphs::of(edges, pieces, within) else {
-        return;
-    };
-    graphs.follow(report);
+/// Reports the parameters of all contacts of two spirals of two edges, and where it can tell whether they pass there;
+/// counts the stretches down from what is `left_over`.
+pub(super) fn piece_contacts(
+    edges: &[Edge; 2],
+    pieces: [&Spiral; 2],
+    within: f64,
+    left_over: &mut usize,
+    report: Report,
+) {
+    if let Some(graphs) = Graphs::of(edges, pieces, within) {
+        graphs.follow(left_over, report);
+    }
 }
 
 impl Spiral {
@@ -248,7 +252,7 @@ impl<'a> Graphs<'a> {
         })
     }
 
-    fn follow(&self, report: Report) {
+    fn follow(&self, left_over: &mut usize, report: Report) {
         // Each graph from left to right, then the stretch that they share.
         let ends = [0, 1].map(|which| {
             let ends = self.pieces[which].t.map(|t| self.local(which, t));
@@ -277,10 +281,9 @@ impl<'a> Graphs<'a> {
             }
         }
         let mut stretches = vec![(left, right)];
-        let mut left_over = MOST_STRETCHES;
         while let Some((left, right)) = stretches.pop() {
-            left_over = left_over.saturating_sub(1);
-            self.stretch(&left, &right, left_over > 0, &mut stretches, report);
+            *left_over = left_over.saturating_sub(1);
+            self.stretch(&left, &right, *left_over > 0, &mut stretches, report);
         }
     }
 

@@ -58,12 +58,17 @@ const ROUNDING: f64 = 8.0 * f64::EPSILON;
 /// stretch goes from an end of one of them to another end, a point otherwise. A point at the edges' ends is preferred, so
 /// that edges that follow each other meet in their shared corner and there only, however smoothly they join.
 ///
+/// Edges with coordinates that are not finite meet nowhere.
+///
 /// # Accuracy
 /// A point lies on both edges within `within` and a few roundings of the coordinates. Along the edges it is as sure as the
 /// angle between them allows: rounding divided by the sine of that angle.
 pub fn meetings(a: &Edge, b: &Edge, within: f64) -> Vec<Meeting> {
     let (box_a, box_b) = (reach(a), reach(b));
     let largest = |bounds: Bounds| bounds.min.abs().max(bounds.max.abs()).max_element();
+    if !(largest(box_a) + largest(box_b)).is_finite() {
+        return Vec::new();
+    }
     let within = within.max(ROUNDING * largest(box_a).max(largest(box_b)));
     if !box_a.grown(within).meets(box_b) {
         return Vec::new();

@@ -1,6 +1,6 @@
 //! Where an edge meets itself.
 
-use super::graphs::piece_contacts;
+use super::graphs::{MOST_STRETCHES, piece_contacts};
 use crate::foot::foot;
 use crate::polynomial::sign_changes;
 use crate::spiral::spirals;
@@ -88,15 +88,26 @@ fn of_straight(bezier: Bezier) -> Vec<(f64, f64)> {
 fn of_parallel(parallel: Parallel) -> Vec<(f64, f64)> {
     let edge = Edge::Parallel(parallel);
     let bounds = edge.bounds();
+    if !bounds.size().is_finite() {
+        return Vec::new();
+    }
     let moved = edge.moved(-bounds.centre());
     let within = super::ROUNDING * Bounds::size(bounds).max_element();
     let pieces = spirals(&moved);
     let mut found = Vec::new();
+    let mut left_over = MOST_STRETCHES;
     for (i, first) in pieces.iter().enumerate() {
         for second in pieces.iter().skip(i + 2) {
-            piece_contacts(&[moved, moved], [first, second], within, &mut |t, _| {
-                found.push((t[0], t[1]));
-            });
+            let pair = [first, second];
+            piece_contacts(
+                &[moved, moved],
+                pair,
+                within,
+                &mut left_over,
+                &mut |t, _| {
+                    found.push((t[0], t[1]));
+                },
+            );
         }
     }
     let cusps = parallel.cusps();

@@ -1,8 +1,10 @@
 //! Known answers, coincident edges, and random edges against brute force.
 
+mod hostile;
 mod known;
 mod overlaps;
 mod random;
+mod two_ways;
 
 use super::Meeting;
 use crate::{Arc, Base, Bezier, Edge, EllipseArc, Parallel, trig};

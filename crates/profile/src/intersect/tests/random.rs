@@ -46,7 +46,8 @@ fn legal(base: Base, distance: f64) -> Option<Parallel> {
     (parallel.least_speed_ratio().0 > 0.05).then_some(parallel)
 }
 
-pub(crate) fn edge() -> impl Strategy<Value = Edge> {
+/// Lines and arcs.
+pub(super) fn simple_edge() -> impl Strategy<Value = Edge> {
     prop_oneof![
         (point(), point()).prop_map(|(a, b)| Edge::line(a, b)),
         (point(), point(), sweep()).prop_map(|(start, end, sweep)| Edge::Arc(Arc {
@@ -54,16 +55,32 @@ pub(crate) fn edge() -> impl Strategy<Value = Edge> {
             end,
             sweep
         })),
-        ellipse().prop_map(Edge::Ellipse),
-        bezier().prop_map(Edge::Bezier),
-        (ellipse(), -0.5..0.5_f64).prop_filter_map("legal", |(e, d)| legal(Base::Ellipse(e), d)
-            .map(Edge::Parallel)),
-        (bezier(), -0.3..0.3_f64).prop_filter_map("legal", |(b, d)| legal(Base::Bezier(b), d)
-            .map(Edge::Parallel)),
     ]
-    .prop_filter("long enough", |edge| {
-        edge.bounds().size().max_element() > 1e-3
-    })
+    .prop_filter("long enough", is_long)
+}
+
+pub(super) fn elliptic_edge() -> impl Strategy<Value = Edge> {
+    ellipse()
+        .prop_map(Edge::Ellipse)
+        .prop_filter("long enough", is_long)
+}
+
+fn is_long(edge: &Edge) -> bool {
+    edge.bounds().size().max_element() > 1e-3
+}
+
+/// Edges of all kinds.
+fn edge() -> impl Strategy<Value = Edge> {
+    prop_oneof![
+        2 => simple_edge(),
+        1 => elliptic_edge(),
+        1 => bezier().prop_map(Edge::Bezier),
+        1 => (ellipse(), -0.5..0.5_f64)
+            .prop_filter_map("legal", |(e, d)| legal(Base::Ellipse(e), d).map(Edge::Parallel)),
+        1 => (bezier(), -0.3..0.3_f64)
+            .prop_filter_map("legal", |(b, d)| legal(Base::Bezier(b), d).map(Edge::Parallel)),
+    ]
+    .prop_filter("long enough", is_long)
 }
 
 /// Chords of the edge.

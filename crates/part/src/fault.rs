@@ -8,8 +8,8 @@ use std::sync::Arc;
 /// Faults that are shown; the number of the others is.
 const SHOWN: usize = 50;
 
-/// Faults that are kept while reading. More would only fill the memory.
-const KEPT: usize = 2000;
+/// Faults after which reading stops: more would take time and memory and help nobody.
+const ENOUGH: usize = 1000;
 
 /// A place in the text, in bytes.
 pub type Span = Range<usize>;
@@ -73,19 +73,19 @@ impl Fault {
     }
 }
 
-/// Faults as they are found, in any order; past a certain number they are only counted.
+/// Faults as they are found, in any order.
 #[derive(Debug, Default)]
 pub(crate) struct Found {
     faults: Vec<Fault>,
-    uncounted: usize,
+    /// How many there were, those among them that have been dropped included.
+    count: usize,
 }
 
 impl Found {
     pub(crate) fn push(&mut self, fault: Fault) {
-        if self.faults.len() < KEPT {
+        self.count += 1;
+        if !self.is_enough() {
             self.faults.push(fault);
-        } else {
-            self.uncounted += 1;
         }
     }
 
@@ -95,8 +95,14 @@ impl Found {
         }
     }
 
+    /// How many have been found.
     pub(crate) fn count(&self) -> usize {
-        self.faults.len() + self.uncounted
+        self.count
+    }
+
+    /// True where there are so many that the rest need not be read.
+    pub(crate) fn is_enough(&self) -> bool {
+        self.count >= ENOUGH
     }
 
     pub(crate) fn is_empty(&self) -> bool {
@@ -129,29 +135,30 @@ struct Located {
 impl Faults {
     /// The faults of the text `text` of the file `file` (a name for people); `None` where there are none.
     pub fn of(file: &str, text: &str, faults: Vec<Fault>) -> Option<Self> {
-        let found = Found {
-            faults,
-            uncounted: 0,
-        };
+        let mut found = Found::default();
+        found.extend(faults);
         Self::gather(file, text.to_owned(), found)
     }
 
     /// As [`Self::of`], of faults found while reading.
     pub(crate) fn gather(file: &str, text: String, found: Found) -> Option<Self> {
-        let Found {
-            mut faults,
-            uncounted,
-        } = found;
+        let stopped = found.is_enough();
+        let mut faults = found.faults;
         if faults.is_empty() {
             return None;
         }
         faults.sort_by_key(|fault| fault.labels.first().map_or(0, |label| label.span.start));
         if faults.len() > SHOWN {
-            let more = faults.len() - SHOWN + uncounted;
+            let more = faults.len() - SHOWN;
+            let more = if stopped {
+                "many more faults, and the rest of the file has not been read".to_owned()
+            } else {
+                format!("{more} more faults that are not shown")
+            };
             faults.truncate(SHOWN);
             faults.push(Fault {
                 code: "part::more_faults",
-                message: format!("and {more} more faults that are not shown"),
+                message: format!("and {more}"),
                 labels: Vec::new(),
                 help: Some("mend the first ones and run it again: many may have one cause".into()),
             });

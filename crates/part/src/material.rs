@@ -58,6 +58,9 @@ pub(crate) fn materials<'a>(
     };
     let mut places = HashMap::new();
     for item in items {
+        if found.is_enough() {
+            break;
+        }
         let Some(fields) = Fields::open(item, &MATERIAL, found) else {
             continue;
         };

@@ -6,6 +6,9 @@ use std::ops::Range;
 /// Bytes of text quoted at most before and after a place. A file on one line of megabytes is quoted in part.
 const QUOTED: usize = 240;
 
+/// Bytes underlined at most.
+const UNDERLINED: usize = 200;
+
 /// Bytes from one noted line number to the next.
 const STRIDE: usize = 1 << 16;
 
@@ -53,7 +56,8 @@ impl Source {
             .max(start);
         let line = &self.text[start..end];
         let line = line.split(['\n', '\r']).next().unwrap_or(line);
-        start..start + line.len()
+        let length = line.floor_char_boundary(line.len().min(UNDERLINED));
+        start..start + length
     }
 
     /// Number of the line, counted from 0, that the byte at `offset` is on.
@@ -183,6 +187,7 @@ mod tests {
     #[test]
     fn an_endless_line_is_quoted_in_part() {
         let source = Source::new("bell.toml", "[".repeat(1 << 20));
+        assert_eq!(source.underlined(&(10..700_000)), 10..10 + UNDERLINED);
         let (text, line, _) = quoted(&source, 700_000..700_001, 1);
         assert!(text.len() <= 2 * QUOTED + 2, "{}", text.len());
         assert_eq!(line, 0);

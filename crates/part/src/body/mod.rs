@@ -76,6 +76,9 @@ pub(crate) fn bodies(
     let mut names: Vec<(String, Span)> = Vec::new();
     let mut drafts = Vec::new();
     for item in items {
+        if found.is_enough() {
+            break;
+        }
         drafts.extend(body(item, values, materials, &mut edges, &mut names, found));
     }
     check_names(&names, found);

@@ -61,3 +61,6 @@ impl<'e> Written<'e> {
         self.whole.clone()
     }
 }
+
+#[cfg(test)]
+mod tests;

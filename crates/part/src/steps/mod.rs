@@ -170,7 +170,7 @@ impl Reader<'_, '_> {
                     None => false,
                 }
             };
-            if self.edges.0 > limits::EDGES {
+            if self.edges.0 > limits::EDGES || self.found.is_enough() {
                 return false;
             }
         }

@@ -22,7 +22,6 @@ pub(crate) fn parse<'t>(text: &'t str, found: &mut Found) -> Document<'t> {
         lexer,
         token: first,
         found,
-        end: None,
         open: 0,
         values: 0,
         damaged: false,
@@ -54,8 +53,6 @@ pub(super) struct Grammar<'t, 'f> {
     /// The word that is looked at.
     pub(super) token: Token,
     pub(super) found: &'f mut Found,
-    /// The end of the text, once the rest of it is not to be read.
-    end: Option<Token>,
     /// Brackets and braces open here.
     pub(super) open: usize,
     /// Values so far.
@@ -66,7 +63,7 @@ pub(super) struct Grammar<'t, 'f> {
 impl<'t> Grammar<'t, '_> {
     /// Goes on to the next word; at the end of the text it stays.
     pub(super) fn next(&mut self) {
-        if let Some(token) = self.end.or_else(|| self.lexer.next()) {
+        if let Some(token) = self.lexer.next() {
             self.token = token;
         }
     }
@@ -88,6 +85,10 @@ impl<'t> Grammar<'t, '_> {
     /// Passes blanks, comments and line ends.
     pub(super) fn blanks(&mut self) {
         loop {
+            if self.found.is_enough() {
+                self.stop();
+                self.next();
+            }
             match self.token.kind() {
                 TokenKind::Whitespace => {}
                 TokenKind::Newline => self.line_end(),
@@ -307,6 +308,12 @@ impl<'t> Grammar<'t, '_> {
         );
     }
 
+    /// Reads no more of the text: what comes next is its end.
+    fn stop(&mut self) {
+        self.lexer = Source::new("").lex();
+        self.damaged = true;
+    }
+
     /// Counts a value. Past the limit the rest of the text is not read.
     fn count(&mut self, span: &Span) -> Result<(), Lost> {
         self.values += 1;
@@ -322,7 +329,7 @@ impl<'t> Grammar<'t, '_> {
             )
             .help("give an outline of so many points in a CSV file"),
         );
-        self.end = self.lexer.by_ref().last();
+        self.stop();
         Err(Lost)
     }
 }

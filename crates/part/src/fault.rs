@@ -8,6 +8,9 @@ use std::sync::Arc;
 /// Faults that are shown; the number of the others is.
 const SHOWN: usize = 50;
 
+/// Characters of a message or of advice at most.
+const TOLD: usize = 800;
+
 /// Faults after which reading stops: more would take time and memory and help nobody.
 const ENOUGH: usize = 1000;
 
@@ -109,6 +112,12 @@ impl Found {
         self.faults.is_empty()
     }
 
+    /// The codes of the faults, in the order in which they were found.
+    #[cfg(test)]
+    pub(crate) fn codes(&self) -> Vec<&'static str> {
+        self.faults.iter().map(|fault| fault.code).collect()
+    }
+
     /// Drops the faults with these codes: they may be consequences of others.
     pub(crate) fn drop_codes(&mut self, codes: &[&str]) {
         self.faults.retain(|fault| !codes.contains(&fault.code));
@@ -130,6 +139,19 @@ pub struct Faults {
 struct Located {
     fault: Fault,
     source: Arc<Source>,
+}
+
+/// A message as it is shown: what it repeats of the file is not endless and commands no terminal.
+fn told(message: &str) -> String {
+    let mut told: String = message
+        .chars()
+        .take(TOLD)
+        .map(|c| if c.is_control() { ' ' } else { c })
+        .collect();
+    if told.len() < message.len() {
+        told.push('…');
+    }
+    told
 }
 
 impl Faults {
@@ -167,8 +189,11 @@ impl Faults {
         let faults = faults
             .into_iter()
             .map(|mut fault| {
+                fault.message = told(&fault.message);
+                fault.help = fault.help.as_deref().map(told);
                 for label in &mut fault.labels {
                     label.span = source.underlined(&label.span);
+                    label.text = told(&label.text);
                 }
                 Located {
                     fault,

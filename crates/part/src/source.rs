@@ -25,6 +25,7 @@ pub(crate) struct Source {
 
 impl Source {
     pub(crate) fn new(name: &str, text: String) -> Self {
+        let text = printable(text);
         let mut ends = 0;
         let noted = text
             .as_bytes()
@@ -93,6 +94,23 @@ impl Source {
         let start = before.rfind('\n').map_or(0, |end| end + 1);
         before[start..].chars().count()
     }
+}
+
+/// The text with ? for control characters, byte for byte: a terminal would obey them.
+fn printable(text: String) -> String {
+    let commands = |c: char| c.is_control() && !matches!(c, '\n' | '\r' | '\t');
+    if !text.contains(commands) {
+        return text;
+    }
+    let mut printable = String::with_capacity(text.len());
+    for c in text.chars() {
+        if commands(c) {
+            printable.extend(std::iter::repeat_n('?', c.len_utf8()));
+        } else {
+            printable.push(c);
+        }
+    }
+    printable
 }
 
 fn line_ends(bytes: &[u8]) -> usize {
@@ -191,6 +209,12 @@ mod tests {
         let (text, line, _) = quoted(&source, 700_000..700_001, 1);
         assert!(text.len() <= 2 * QUOTED + 2, "{}", text.len());
         assert_eq!(line, 0);
+    }
+
+    #[test]
+    fn control_characters_are_not_sent_to_the_terminal() {
+        let source = Source::new("bell.toml", "a\u{1b}[31m\u{9b}b\0".to_owned());
+        assert_eq!(quoted(&source, 0..10, 0).0, "a?[31m??b?");
     }
 
     #[test]

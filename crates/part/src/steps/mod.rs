@@ -212,3 +212,6 @@ impl Reader<'_, '_> {
         (found.count() == before).then_some(step)
     }
 }
+
+#[cfg(test)]
+mod tests;

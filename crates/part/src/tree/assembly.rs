@@ -3,7 +3,7 @@
 use super::table::{Entry, Key, Origin, Table};
 use super::{Kind, List, Value, short};
 use crate::fault::Found;
-use crate::nearest::grouped;
+use crate::nearest::{grouped, shown};
 use crate::{Fault, Span, limits};
 
 /// The words of a key, `a.b.c`. Almost always one.
@@ -123,7 +123,7 @@ impl<'t> Assembly<'t> {
                 let fault = if of_list || matches!(kind, Kind::List(_)) {
                     fault.help(format!(
                         "[[{0}]] makes one of several, [{0}] the only one; use the same brackets everywhere",
-                        last.name
+                        shown(&last.name)
                     ))
                 } else {
                     fault.help("put the keys of both under one header")
@@ -231,7 +231,7 @@ fn inner_table<'v, 't>(value: &'v mut Value<'t>) -> Option<&'v mut Table<'t>> {
 fn twice(key: &Key<'_>, first: Span) -> Fault {
     Fault::new(
         "toml::twice",
-        format!("`{}` is given twice", key.name),
+        format!("`{}` is given twice", shown(&key.name)),
         key.span.clone(),
         "the second time",
     )
@@ -243,7 +243,7 @@ fn not_a_table(key: &Key<'_>, first: Span) -> Fault {
         "toml::not_a_table",
         format!(
             "`{}` has a value already, so no key can go below it",
-            key.name
+            shown(&key.name)
         ),
         key.span.clone(),
         "",

@@ -4,7 +4,7 @@ use super::assembly::{Assembly, KeyPath};
 use super::table::Table;
 use super::{Kind, Value};
 use crate::fault::Found;
-use crate::nearest::grouped;
+use crate::nearest::{grouped, shown};
 use crate::{Fault, Span, limits};
 use toml_parser::Source;
 use toml_parser::lexer::{Lexer, Token, TokenKind};
@@ -203,19 +203,20 @@ impl<'t> Grammar<'t, '_> {
         self.spaces();
         if !self.at(TokenKind::Equals) {
             let key = path.last();
+            let name = shown(&key.name);
             let mut fault = Fault::new(
                 "toml::equals",
-                format!("an equals sign is missing after `{}`", key.name),
+                format!("an equals sign is missing after `{name}`"),
                 key.span.clone(),
                 "",
             );
             let more = self.key_goes_on(key.span.end);
             fault = if let Some(more) = more {
-                fault.help(format!("a key is one word: {}_{more}", key.name))
+                fault.help(format!("a key is one word: {name}_{}", shown(more)))
             } else if key.name.bytes().all(|byte| byte.is_ascii_digit()) {
                 fault.help("a decimal number is written with a point: 12.5")
             } else {
-                fault.help(format!("write {} = and its value", key.name))
+                fault.help(format!("write {name} = and its value"))
             };
             self.found.push(fault);
             return Err(Lost);

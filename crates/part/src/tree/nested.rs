@@ -27,7 +27,7 @@ impl<'t> Grammar<'t, '_> {
             if self.at(TokenKind::Eof) || self.at_statement() {
                 return self.unclosed(open, "list", "]");
             }
-            items.push(self.value(depth + 1)?);
+            items.push(self.item(depth + 1)?);
             self.blanks();
             match self.token.kind() {
                 TokenKind::Comma => self.next(),
@@ -51,6 +51,18 @@ impl<'t> Grammar<'t, '_> {
                 }
                 _ => self.missing_comma(),
             }
+        }
+    }
+
+    /// A value of a list. One whose structure is lost is left as broken if its end is on the same line.
+    fn item(&mut self, depth: usize) -> Result<Value<'t>, Lost> {
+        let level = self.open;
+        let start = self.span().start;
+        if let Ok(value) = self.value(depth) {
+            Ok(value)
+        } else {
+            let end = self.end_of_item(level).ok_or(Lost)?;
+            Ok(Value::new(Kind::Broken, &(start..end)))
         }
     }
 

@@ -20,6 +20,25 @@ impl Grammar<'_, '_> {
         }
     }
 
+    /// Passes the end of a value that brackets or braces are open in, down to `level`, if it is on this line.
+    pub(super) fn end_of_item(&mut self, level: usize) -> Option<usize> {
+        while self.open > level && !self.at_statement() {
+            match self.token.kind() {
+                TokenKind::Newline | TokenKind::Eof => return None,
+                TokenKind::LeftSquareBracket | TokenKind::LeftCurlyBracket => self.open += 1,
+                TokenKind::RightSquareBracket | TokenKind::RightCurlyBracket => self.open -= 1,
+                _ => {}
+            }
+            if self.open == level {
+                let end = self.span().end;
+                self.next();
+                return Some(end);
+            }
+            self.next();
+        }
+        None
+    }
+
     /// Skips to the next statement after the structure was lost.
     pub(super) fn recover(&mut self) {
         self.damaged = true;

@@ -2,6 +2,7 @@
 
 use super::grammar::{Grammar, Lost, control_character};
 use super::{Kind, Value};
+use crate::nearest::shown;
 use crate::{Fault, Span};
 use std::borrow::Cow;
 use toml_parser::decoder::ScalarKind;
@@ -171,7 +172,10 @@ fn unquoted(written: &str, span: &Span) -> Fault {
         span.clone(),
         "",
     )
-    .help(format!("write \"{}\"", written.replace(['"', '\''], "")))
+    .help(format!(
+        "write \"{}\"",
+        shown(&written.replace(['"', '\''], ""))
+    ))
 }
 
 /// One word that is no value.

@@ -1,7 +1,7 @@
 //! The tree agrees with the `toml` crate's.
 
 use super::table::Table;
-use super::{Kind, Value, parse};
+use super::{Document, Kind, Value, parse};
 use crate::fault::Found;
 use proptest::prelude::*;
 
@@ -192,22 +192,61 @@ fn faulty_texts_are_refused_alike() {
     }
 }
 
+/// The table `key` of `table`.
+fn inner<'r, 't>(table: &'r Table<'t>, key: &str) -> &'r Table<'t> {
+    match &table.get(key).unwrap().value.kind {
+        Kind::Table(inner) => inner,
+        other => panic!("{key} is {other:?}"),
+    }
+}
+
+#[test]
+fn a_broken_value_leaves_the_others() {
+    let text = "a = [ { b = 2, c [3] }, 5, x y ]\n[d]\ne = 4x\nf = 5\n";
+    let mut found = Found::default();
+    let Document { root, damaged } = parse(text, &mut found);
+    assert_eq!(
+        found.codes(),
+        ["toml::equals", "toml::unquoted", "toml::unquoted"]
+    );
+    assert!(!damaged);
+    let Kind::List(list) = &root.get("a").unwrap().value.kind else {
+        panic!("a is a list");
+    };
+    let kinds: Vec<&Kind<'_>> = list.items.iter().map(|item| &item.kind).collect();
+    assert!(matches!(
+        kinds[..],
+        [Kind::Broken, Kind::Integer(5), Kind::Broken]
+    ));
+    let d = inner(&root, "d");
+    assert!(matches!(d.get("e").unwrap().value.kind, Kind::Broken));
+    assert!(matches!(d.get("f").unwrap().value.kind, Kind::Integer(5)));
+}
+
 #[test]
 fn a_broken_statement_leaves_the_others() {
-    let text = "a = 1\nb = [ { c = 2, d 3 }, ]\n[e]\nf = 4x\ng = 5\n";
+    let text = "a = [ 1,\n { b = 2\n[c]\nd = [ 3,\ne = 4\n[f\ng = 5\n[h]\ni = \"x\nj = 6\n";
     let mut found = Found::default();
-    let document = parse(text, &mut found);
-    assert_eq!(found.count(), 2);
-    assert!(document.damaged);
-    assert!(matches!(
-        document.root.get("b").unwrap().value.kind,
-        Kind::Broken
-    ));
-    let Kind::Table(e) = &document.root.get("e").unwrap().value.kind else {
-        panic!("e is a table");
-    };
-    assert!(matches!(e.get("f").unwrap().value.kind, Kind::Broken));
-    assert!(matches!(e.get("g").unwrap().value.kind, Kind::Integer(5)));
+    let Document { root, damaged } = parse(text, &mut found);
+    let codes = [
+        "toml::unclosed",
+        "toml::unclosed",
+        "toml::header",
+        "toml::unclosed_text",
+    ];
+    assert_eq!(found.codes(), codes);
+    assert!(damaged);
+    assert!(matches!(root.get("a").unwrap().value.kind, Kind::Broken));
+    let c = inner(&root, "c");
+    assert!(matches!(c.get("d").unwrap().value.kind, Kind::Broken));
+    assert!(matches!(c.get("e").unwrap().value.kind, Kind::Integer(4)));
+    assert!(
+        c.get("g").is_none(),
+        "a key below a broken header belongs nowhere"
+    );
+    let h = inner(&root, "h");
+    assert!(matches!(h.get("i").unwrap().value.kind, Kind::Broken));
+    assert!(matches!(h.get("j").unwrap().value.kind, Kind::Integer(6)));
 }
 
 #[test]

@@ -5,6 +5,7 @@ use crate::tolerance::touch;
 use crate::tree::Tree;
 use crate::{Bounds, Edge, Loop, Seeker, Zone, left_of};
 use glam::DVec2;
+use std::ops::Range;
 
 /// The edges of some loops with a tree over their pieces.
 #[derive(Debug, Clone)]
@@ -94,6 +95,11 @@ impl Boundary {
         (outline, edge - self.first[outline])
     }
 
+    /// The edges of each loop, by their indices over all loops.
+    pub(crate) fn loop_edges(&self) -> impl Iterator<Item = Range<usize>> {
+        self.first.windows(2).map(|ends| ends[0]..ends[1])
+    }
+
     /// A box that holds the boundary.
     pub(crate) fn bounds(&self) -> Bounds {
         self.bounds
@@ -114,7 +120,7 @@ impl Boundary {
         &self.seekers[edge]
     }
 
-    /// The nearest edge; `None` where `p` is not finite.
+    /// The nearest edge; where `p` is not finite there may be none.
     pub(crate) fn nearest(&self, p: DVec2) -> Option<Found> {
         let mut best: Option<Found> = None;
         self.tree.nearest(p, f64::INFINITY, |piece| {
@@ -148,6 +154,18 @@ impl Boundary {
         } else {
             self.winding(p) > 0
         }
+    }
+
+    /// Distance from `p` to the boundary, negative on its left; not a number where `p` is not finite.
+    pub(crate) fn signed_distance(&self, p: DVec2) -> f64 {
+        self.nearest(p).map_or(f64::NAN, |found| {
+            let distance = found.distance_squared.sqrt();
+            if self.is_left(p, found) {
+                -distance
+            } else {
+                distance
+            }
+        })
     }
 
     /// Turns of all loops about `p`, counter-clockwise positive.

@@ -1,7 +1,7 @@
 //! A region made ready for many questions about points.
 
 use crate::Region;
-use crate::boundary::{Boundary, Found};
+use crate::boundary::Boundary;
 use crate::tolerance::touch;
 use glam::DVec2;
 
@@ -76,15 +76,7 @@ impl RegionIndex {
     /// # Accuracy
     /// A few units in the last place of the largest coordinate difference between `p` and the nearest edge's ends.
     pub fn signed_distance(&self, p: DVec2) -> f64 {
-        let signed = |found: Found| {
-            let distance = found.distance_squared.sqrt();
-            if self.boundary.is_left(p, found) {
-                -distance
-            } else {
-                distance
-            }
-        };
-        self.boundary.nearest(p).map_or(f64::NAN, signed)
+        self.boundary.signed_distance(p)
     }
 }
 

@@ -8,7 +8,6 @@ use super::settle::settled;
 use super::wording::Wording;
 use crate::{Fault, Span};
 use glam::DVec2;
-use profile::{LARGEST, SMALLEST};
 
 /// The circle about (`r`, `z`), in two half turns. It may touch the axis.
 pub(super) fn circle(
@@ -23,17 +22,6 @@ pub(super) fn circle(
         faults.push(Fault::new(code, message, span.clone(), "").help(help));
         None
     };
-    if !(SMALLEST..=LARGEST).contains(&radius) || r.abs().max(z.abs()) > LARGEST {
-        return refuse(
-            "circle::out_of_range",
-            format!(
-                "a circle of radius {} about {} cannot be computed with",
-                wording.length(radius),
-                wording.place(DVec2::new(r, z))
-            ),
-            "look at the unit and at the powers of ten",
-        );
-    }
     let inner = on_axis(r - radius, ROUNDING * radius);
     if inner < 0.0 {
         return refuse(

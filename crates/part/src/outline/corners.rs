@@ -120,18 +120,27 @@ impl Place<'_> {
     fn fault(&self, fault: CornerFault, at: DVec2, origins: &Origins) -> Fault {
         let place = self.wording.place(at);
         let what = self.corner.words().0;
-        let code = match fault {
-            CornerFault::NoCorner => "corner::smooth",
-            CornerFault::TurnsBack => "corner::turns_back",
+        let words = self.words(origins);
+        let (code, message) = match fault {
+            CornerFault::NoCorner => (
+                "corner::smooth",
+                format!("there is no corner for {words}: they run on smoothly at {place}"),
+            ),
+            CornerFault::TurnsBack => (
+                "corner::turns_back",
+                format!("{words} does not fit: the outline turns straight back at {place}"),
+            ),
             CornerFault::TooLarge {
                 largest,
                 on_before,
                 on_after,
             } => return self.too_large(largest, [on_before, on_after], at, origins),
             // The reader lets no other size through.
-            _ => "corner::not_a_length",
+            _ => (
+                "corner::not_a_length",
+                format!("{words} cannot be made: {fault}"),
+            ),
         };
-        let message = format!("{} at {place} cannot be made: {fault}", self.words(origins));
         self.report(code, message, place, origins)
             .help(format!("leave the {what} out of {}", self.step.words))
     }
@@ -154,7 +163,7 @@ impl Place<'_> {
             Corner::Round(..) => "radius",
             Corner::Chamfer(..) => "leg",
         };
-        let (label, mut help) = match largest.map(|metres| self.wording.length(metres)) {
+        let (label, mut help) = match largest.map(|metres| self.wording.at_most(metres)) {
             Some(largest) => (
                 format!("at most {largest}"),
                 format!("the largest {what} that fits is {largest}"),

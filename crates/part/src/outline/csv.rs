@@ -8,7 +8,7 @@ use super::settle::settled;
 use super::wording::Wording;
 use crate::nearest::{advice, shown};
 use crate::{Fault, LengthUnit, Neighbours, Span, limits};
-use csv::{ReaderBuilder, StringRecord, Trim};
+use csv::{Position, ReaderBuilder, StringRecord, Trim};
 use glam::DVec2;
 use profile::{Edge, LARGEST};
 
@@ -98,6 +98,18 @@ fn separator(text: &str) -> char {
         .unwrap_or(',')
 }
 
+/// The line, counted from 1, that a record at `position` stands on. The reader notes where it went on reading: empty lines
+/// and comments before the record come after that.
+fn line(text: &str, position: Option<&Position>) -> u64 {
+    let (at, line) = position.map_or((0, 1), |at| (at.byte(), at.line()));
+    let rest = usize::try_from(at).ok().and_then(|at| text.get(at..));
+    let before = rest
+        .unwrap_or("")
+        .lines()
+        .take_while(|line| line.is_empty() || line.starts_with('#'));
+    line + before.count() as u64
+}
+
 impl Stations<'_> {
     fn fault(&self, code: &'static str, message: &str, help: impl Into<String>) -> Fault {
         let message = format!("`{}`: {message}", shown(self.file));
@@ -127,7 +139,7 @@ impl Stations<'_> {
                     )
                 })
                 .and_then(|record| {
-                    let line = record.position().map_or(0, csv::Position::line);
+                    let line = line(text, record.position());
                     // Spreadsheets leave rows of separators behind.
                     if record.iter().all(str::is_empty) {
                         return Ok(());
@@ -261,7 +273,7 @@ impl Stations<'_> {
             let message = format!("line {line} lacks a value");
             return Err(self.fault("csv::no_value", &message, "write one value a column"));
         }
-        if text.replacen(',', ".", 1).parse::<f64>().is_ok() {
+        if text.contains(',') && text.replacen(',', ".", 1).parse::<f64>().is_ok() {
             let message = format!("line {line} has `{shown}` with a decimal comma");
             let help = format!(
                 "write decimals with a point: {}",

@@ -124,16 +124,11 @@ pub(super) fn walk(steps: &[Step], wording: Wording, faults: &mut Vec<Fault>) ->
 ///
 /// # Errors
 /// It is too far out.
-pub(super) fn in_range(point: DVec2, step: &Step, wording: Wording) -> Result<DVec2, Fault> {
+fn in_range(point: DVec2, step: &Step, wording: Wording) -> Result<DVec2, Fault> {
     if point.abs().max_element() <= LARGEST {
         return Ok(point);
     }
-    Err(out_of_range(step, wording))
-}
-
-/// `step` leads too far out.
-pub(super) fn out_of_range(step: &Step, wording: Wording) -> Fault {
-    Fault::new(
+    Err(Fault::new(
         "step::out_of_range",
         format!(
             "{} leads farther out than can be computed with, {}",
@@ -143,7 +138,7 @@ pub(super) fn out_of_range(step: &Step, wording: Wording) -> Fault {
         step.span.clone(),
         "",
     )
-    .help("look at the unit and at the powers of ten")
+    .help("look at the unit, at the powers of ten and at slopes near 0"))
 }
 
 fn past_axis(step: &Step, point: DVec2, wording: Wording) -> Fault {

@@ -9,6 +9,12 @@ const PLACE_DIGITS: usize = 6;
 /// Digits of a length that is compared with another one.
 const LENGTH_DIGITS: usize = 9;
 
+/// Digits of a bound.
+const BOUND_DIGITS: usize = 6;
+
+/// Relative difference that is the rounding of a computation.
+const SAME: f64 = 1e-12;
+
 /// Writes lengths in one unit.
 #[derive(Debug, Clone, Copy)]
 pub(super) struct Wording {
@@ -19,20 +25,56 @@ pub(super) struct Wording {
 impl Wording {
     /// `12.5 mm`
     pub(super) fn length(self, metres: f64) -> String {
-        let number = rounded(metres / self.unit.metres(), LENGTH_DIGITS);
+        let number = significant(metres / self.unit.metres(), LENGTH_DIGITS);
         format!("{number} {}", self.unit.word())
+    }
+
+    /// A length that is a largest one: a length with these digits still fits.
+    pub(super) fn at_most(self, metres: f64) -> String {
+        self.bound(metres, false)
+    }
+
+    /// A length that is a least one: a length with these digits still reaches.
+    pub(super) fn at_least(self, metres: f64) -> String {
+        self.bound(metres, true)
+    }
+
+    fn bound(self, metres: f64, up: bool) -> String {
+        let value = metres / self.unit.metres();
+        let text = format!("{value:.*e}", BOUND_DIGITS - 1);
+        let nearest: f64 = text.parse().unwrap_or(value);
+        let place = last_place(&text);
+        // What differs from round digits by the rounding of a computation is meant to be round.
+        let slack = SAME * value.abs();
+        let bound = if up && nearest < value - slack {
+            nearest + place
+        } else if !up && nearest > value + slack {
+            nearest - place
+        } else {
+            nearest
+        };
+        format!("{} {}", significant(bound, BOUND_DIGITS), self.unit.word())
     }
 
     /// `r = 12.5, z = -40 mm`
     pub(super) fn place(self, point: DVec2) -> String {
         let [r, z] =
-            [point.x, point.y].map(|metres| rounded(metres / self.unit.metres(), PLACE_DIGITS));
+            [point.x, point.y].map(|metres| significant(metres / self.unit.metres(), PLACE_DIGITS));
         format!("r = {r}, z = {z} {}", self.unit.word())
     }
 }
 
+/// What one more in the last of [`BOUND_DIGITS`] digits of a number like `1.23456e7` comes to.
+fn last_place(text: &str) -> f64 {
+    let exponent = text
+        .split_once('e')
+        .and_then(|(_, e)| e.parse::<i32>().ok());
+    let place = exponent.unwrap_or(0) + 1 - i32::try_from(BOUND_DIGITS).unwrap_or(0);
+    format!("1e{place}").parse().unwrap_or(0.0)
+}
+
 /// `value` to so many significant digits, without zeros at the end; in powers of ten where it would be long.
-fn rounded(value: f64, digits: usize) -> String {
+fn significant(value: f64, digits: usize) -> String {
     let rounded: f64 = format!("{value:.*e}", digits - 1).parse().unwrap_or(value);
     let size = rounded.abs();
     if size != 0.0 && !(1e-6..1e9).contains(&size) {
@@ -63,6 +105,17 @@ mod tests {
             unit: LengthUnit::Inch,
         };
         assert_eq!(inch.length(0.0254), "1 in");
+    }
+
+    #[test]
+    fn bounds_hold_as_they_are_written() {
+        assert_eq!(MM.at_most(0.005_777_472_114), "5.77747 mm");
+        assert_eq!(MM.at_most(0.005_777_477_9), "5.77747 mm");
+        assert_eq!(MM.at_least(0.005_777_472_114), "5.77748 mm");
+        assert_eq!(MM.at_most(0.01 * (1.0 - f64::EPSILON)), "10 mm");
+        assert_eq!(MM.at_least(0.015), "15 mm");
+        assert_eq!(MM.at_most(9.999_999), "9999.99 mm");
+        assert_eq!(MM.at_least(1e-12), "1e-9 mm");
     }
 
     #[test]

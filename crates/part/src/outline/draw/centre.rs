@@ -21,7 +21,7 @@ const ON_CIRCLE_OF_CHORD: f64 = 1e-3;
 /// The centre is not as far from one end as from the other, it is one of them, its side is not the given one, or it leaves
 /// open on which side half a turn goes round.
 pub(super) fn arc(leg: &Leg<'_>, centre: &Centre) -> Result<Drawn, Fault> {
-    let at = leg.point(&centre.at)?;
+    let at = leg.point(&centre.at);
     let (to_start, to_end) = (leg.start - at, leg.end - at);
     check_distances(leg, centre, at)?;
 

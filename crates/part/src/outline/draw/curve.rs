@@ -11,7 +11,7 @@ use profile::{Bezier, Edge};
 /// # Errors
 /// The control point makes it run to and fro on a straight line.
 pub(super) fn parabola(leg: &Leg<'_>, control: &Target, span: &Span) -> Result<Drawn, Fault> {
-    let control = leg.point(control)?;
+    let control = leg.point(control);
     let curve = Bezier::parabola(leg.start, control, leg.end);
     if !leg.is_on_line(control) {
         return Ok(Edge::Bezier(curve).into());
@@ -30,7 +30,7 @@ pub(super) fn parabola(leg: &Leg<'_>, control: &Target, span: &Span) -> Result<D
 /// The control points make it run to and fro on a straight line, or do not leave the start.
 pub(super) fn cubic(leg: &Leg<'_>, controls: &[Target; 2], span: &Span) -> Result<Drawn, Fault> {
     let [first, second] = controls;
-    let (first, second) = (leg.point(first)?, leg.point(second)?);
+    let (first, second) = (leg.point(first), leg.point(second));
     let curve = Bezier {
         points: [leg.start, first, second, leg.end],
     };

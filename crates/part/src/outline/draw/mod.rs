@@ -11,7 +11,6 @@ mod via;
 pub(super) use turn::{Turn, half_circle_from};
 
 use super::step::{Kind, Step, Target};
-use super::walk::in_range;
 use super::wording::Wording;
 use crate::Fault;
 use glam::DVec2;
@@ -97,8 +96,8 @@ impl Leg<'_> {
     }
 
     /// A point inside the step.
-    fn point(&self, target: &Target) -> Result<DVec2, Fault> {
-        in_range(target.point(self.start), self.step, self.wording)
+    fn point(&self, target: &Target) -> DVec2 {
+        target.point(self.start)
     }
 
     fn place(&self, point: DVec2) -> String {

@@ -3,9 +3,7 @@
 use super::{Drawn, Leg, Turn};
 use crate::outline::rounding::ROUNDING;
 use crate::outline::step::Side;
-use crate::outline::walk::out_of_range;
 use crate::{Fault, Span};
-use profile::LARGEST;
 
 /// The arc of `radius` whose centre is on the side `centre_on` of travel.
 ///
@@ -18,9 +16,6 @@ pub(super) fn arc(
     long: bool,
     span: &Span,
 ) -> Result<Drawn, Fault> {
-    if radius > LARGEST {
-        return Err(out_of_range(leg.step, leg.wording));
-    }
     let chord = leg.chord().length();
     let ratio = chord / (2.0 * radius);
     // Near half a turn the angle hangs on the root of what the chord lacks: one digit lost in the 16th place would be
@@ -32,7 +27,7 @@ pub(super) fn arc(
         ratio
     };
     if ratio > 1.0 {
-        let least = leg.wording.length(0.5 * chord);
+        let least = leg.wording.at_least(0.5 * chord);
         return Err(Fault::new(
             "step::arc_too_small",
             format!(

@@ -9,7 +9,7 @@ use crate::{Fault, Span};
 /// # Errors
 /// The three points are on a line, or two of them are the same.
 pub(super) fn arc(leg: &Leg<'_>, via: &Target, span: &Span) -> Result<Drawn, Fault> {
-    let via = leg.point(via)?;
+    let via = leg.point(via);
     let fault = |code, message, help: &str| {
         Err(Fault::new(code, message, span.clone(), leg.place(via)).help(help))
     };

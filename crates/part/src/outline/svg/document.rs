@@ -133,6 +133,12 @@ pub(super) fn find(text: &str, id: Option<&str>) -> Result<(Root, Shape), Refusa
                     "take out the <!DOCTYPE ..> line; nothing outside the file is ever fetched",
                 ));
             }
+            Event::Eof if !pass.open.is_empty() => {
+                let message = "it ends before all of its elements do".to_owned();
+                return Err(
+                    Refusal::new("svg::xml", message).help("save the drawing again as plain SVG")
+                );
+            }
             Event::Eof => break,
             _ => {}
         }

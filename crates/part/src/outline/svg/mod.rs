@@ -22,6 +22,7 @@ use super::wording::Wording;
 use crate::nearest::shown;
 use crate::{Fault, Neighbours, Span};
 use glam::{DAffine2, DMat2, DVec2};
+use path::Piece;
 use profile::{Bounds, Edge, LARGEST};
 
 /// Roundings behind a coordinate that went through a product of transforms.
@@ -82,16 +83,16 @@ pub(super) fn outline(
     match edges {
         Ok(edges) => {
             let mut origins = Origins::new(prefix);
-            let mut last: Option<(String, u32)> = None;
+            let mut last: Option<(Piece, u32)> = None;
             let mut tagged = Vec::with_capacity(edges.len());
-            for (edge, words) in edges {
+            for (edge, piece) in edges {
                 // The two edges of a long arc have one tag.
-                let tag = match &last {
-                    Some((before, tag)) if *before == words => *tag,
-                    _ => origins.add(None, &words, drawing.span.clone()),
+                let tag = match last {
+                    Some((before, tag)) if before == piece => tag,
+                    _ => origins.add(None, &piece.to_string(), drawing.span.clone()),
                 };
                 tagged.push((edge, tag));
-                last = Some((words, tag));
+                last = Some((piece, tag));
             }
             settled(tagged, origins, drawing.span, faults)
         }
@@ -102,12 +103,12 @@ pub(super) fn outline(
     }
 }
 
-/// The edges of the section in (r, z), metres, each with its words.
+/// The edges of the section in (r, z), metres, each with its piece of the path.
 fn section(
     drawing: &Drawing<'_>,
     text: &str,
     wording: Wording,
-) -> Result<Vec<(Edge, String)>, Refusal> {
+) -> Result<Vec<(Edge, Piece)>, Refusal> {
     let (root, shape) = document::find(text, drawing.id)?;
     let scale = match drawing.scale {
         Some(scale) => scale,
@@ -148,7 +149,7 @@ fn section(
 }
 
 /// Mirrors a section on the left of the axis.
-fn mirror_to_right(edges: &mut [(Edge, String)], wording: Wording) -> Result<(), Refusal> {
+fn mirror_to_right(edges: &mut [(Edge, Piece)], wording: Wording) -> Result<(), Refusal> {
     let bounds = edges
         .iter()
         .map(|(edge, _)| edge.bounds())

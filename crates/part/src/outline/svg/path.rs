@@ -6,12 +6,31 @@ use crate::limits;
 use crate::outline::rounding::ROUNDING;
 use glam::DVec2;
 use profile::{Bezier, Edge, LARGEST};
+use std::fmt;
 use svgtypes::{PathParser, PathSegment};
+
+/// What an edge is a piece of.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Piece {
+    /// The command with this number and letter.
+    Command(usize, char),
+    /// The line that closes an open path.
+    Closing,
+}
+
+impl fmt::Display for Piece {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        match self {
+            Self::Command(number, letter) => write!(f, "path command {number} ({letter})"),
+            Self::Closing => f.write_str("the closing edge"),
+        }
+    }
+}
 
 /// Draws the commands of a path one after the other.
 #[derive(Debug, Default)]
 struct Pen {
-    edges: Vec<(Edge, String)>,
+    edges: Vec<(Edge, Piece)>,
     /// Where the subpath starts.
     first: DVec2,
     /// Where the pen is as the commands give it.
@@ -29,11 +48,11 @@ struct Pen {
     is_done: bool,
 }
 
-/// The edges of the closed line that the path data `data` draws, each with the words that a message has for it.
+/// The edges of the closed line that the path data `data` draws, each with the piece of the path that it belongs to.
 ///
 /// # Errors
 /// The data cannot be read, draw nothing, or draw several lines.
-pub(super) fn read(data: &str) -> Result<Vec<(Edge, String)>, Refusal> {
+pub(super) fn read(data: &str) -> Result<Vec<(Edge, Piece)>, Refusal> {
     let mut pen = Pen::default();
     for (at, segment) in PathParser::from(data).enumerate() {
         let segment = segment.map_err(|error| {
@@ -44,7 +63,7 @@ pub(super) fn read(data: &str) -> Result<Vec<(Edge, String)>, Refusal> {
             .help("path data are commands M L H V C S Q T A Z with numbers, and start with M")
         })?;
         let command = char::from(segment.command());
-        pen.draw(segment, &format!("path command {} ({command})", at + 1))?;
+        pen.draw(segment, Piece::Command(at + 1, command))?;
         if pen.size > LARGEST {
             return Err(out_of_range());
         }
@@ -69,7 +88,7 @@ pub(super) fn out_of_range() -> Refusal {
 }
 
 impl Pen {
-    fn draw(&mut self, segment: PathSegment, words: &str) -> Result<(), Refusal> {
+    fn draw(&mut self, segment: PathSegment, piece: Piece) -> Result<(), Refusal> {
         let base = if segment.is_abs() {
             DVec2::ZERO
         } else {
@@ -94,12 +113,12 @@ impl Pen {
                 self.at = self.first;
                 Ok(())
             }
-            PathSegment::LineTo { x, y, .. } => self.line(on(x, y), words),
+            PathSegment::LineTo { x, y, .. } => self.line(on(x, y), piece),
             PathSegment::HorizontalLineTo { x, .. } => {
-                self.line(DVec2::new(base.x + x, self.at.y), words)
+                self.line(DVec2::new(base.x + x, self.at.y), piece)
             }
             PathSegment::VerticalLineTo { y, .. } => {
-                self.line(DVec2::new(self.at.x, base.y + y), words)
+                self.line(DVec2::new(self.at.x, base.y + y), piece)
             }
             PathSegment::CurveTo {
                 x1,
@@ -109,17 +128,17 @@ impl Pen {
                 x,
                 y,
                 ..
-            } => self.curve([on(x1, y1), on(x2, y2)], on(x, y), words),
+            } => self.curve([on(x1, y1), on(x2, y2)], on(x, y), piece),
             PathSegment::SmoothCurveTo { x2, y2, x, y, .. } => {
                 let first = cubic.map_or(self.at, |control| 2.0 * self.at - control);
-                self.curve([first, on(x2, y2)], on(x, y), words)
+                self.curve([first, on(x2, y2)], on(x, y), piece)
             }
             PathSegment::Quadratic { x1, y1, x, y, .. } => {
-                self.parabola(on(x1, y1), on(x, y), words)
+                self.parabola(on(x1, y1), on(x, y), piece)
             }
             PathSegment::SmoothQuadratic { x, y, .. } => {
                 let control = quadratic.map_or(self.at, |control| 2.0 * self.at - control);
-                self.parabola(control, on(x, y), words)
+                self.parabola(control, on(x, y), piece)
             }
             PathSegment::EllipticalArc {
                 rx,
@@ -147,22 +166,22 @@ impl Pen {
                     sweep,
                     rounding,
                 );
-                self.add(to, edges, words)
+                self.add(to, edges, piece)
             }
         }
     }
 
-    fn line(&mut self, to: DVec2, words: &str) -> Result<(), Refusal> {
+    fn line(&mut self, to: DVec2, piece: Piece) -> Result<(), Refusal> {
         self.grow(to);
         let edge = Edge::line(self.end, to);
-        self.add(to, [Some(edge), None], words)
+        self.add(to, [Some(edge), None], piece)
     }
 
     fn curve(
         &mut self,
         [first, second]: [DVec2; 2],
         to: DVec2,
-        words: &str,
+        piece: Piece,
     ) -> Result<(), Refusal> {
         self.grow(first);
         self.grow(second);
@@ -171,15 +190,15 @@ impl Pen {
         let curve = Bezier {
             points: [self.end, first, second, to],
         };
-        self.add_curve(curve, &[first, second], to, words)
+        self.add_curve(curve, &[first, second], to, piece)
     }
 
-    fn parabola(&mut self, control: DVec2, to: DVec2, words: &str) -> Result<(), Refusal> {
+    fn parabola(&mut self, control: DVec2, to: DVec2, piece: Piece) -> Result<(), Refusal> {
         self.grow(control);
         self.grow(to);
         self.quadratic = Some(control);
         let curve = Bezier::parabola(self.end, control, to);
-        self.add_curve(curve, &[control], to, words)
+        self.add_curve(curve, &[control], to, piece)
     }
 
     /// A curve that comes back to its start is a loop, in two edges.
@@ -188,11 +207,11 @@ impl Pen {
         mut curve: Bezier,
         controls: &[DVec2],
         to: DVec2,
-        words: &str,
+        piece: Piece,
     ) -> Result<(), Refusal> {
         let is_away = |point: &DVec2| !self.is_short(*point);
         if !self.is_short(to) || !controls.iter().any(is_away) {
-            return self.add(to, [Some(Edge::Bezier(curve)), None], words);
+            return self.add(to, [Some(Edge::Bezier(curve)), None], piece);
         }
         curve.points[3] = self.end;
         let (first, second) = (curve.part(0.0, 0.5), curve.part(0.5, 1.0));
@@ -202,19 +221,18 @@ impl Pen {
             Edge::Bezier(second).with_ends(middle, self.end),
         ];
         self.check_open()?;
-        self.edges
-            .extend(edges.map(|edge| (edge, words.to_owned())));
+        self.edges.extend(edges.map(|edge| (edge, piece)));
         self.at = to;
         Ok(())
     }
 
     /// Adds the edges of one command and moves on to `to`, unless that is where the pen is: drawings are full of pieces
     /// without length.
-    fn add(&mut self, to: DVec2, edges: [Option<Edge>; 2], words: &str) -> Result<(), Refusal> {
+    fn add(&mut self, to: DVec2, edges: [Option<Edge>; 2], piece: Piece) -> Result<(), Refusal> {
         if !self.is_short(to) {
             self.check_open()?;
             for edge in edges.into_iter().flatten() {
-                self.edges.push((edge, words.to_owned()));
+                self.edges.push((edge, piece));
             }
             self.end = to;
         }
@@ -245,7 +263,7 @@ impl Pen {
         (to - self.end).abs().max_element() <= ROUNDING * self.size
     }
 
-    fn finish(mut self) -> Result<Vec<(Edge, String)>, Refusal> {
+    fn finish(mut self) -> Result<Vec<(Edge, Piece)>, Refusal> {
         let Some(start) = self.edges.first().map(|(edge, _)| edge.start()) else {
             return Err(
                 Refusal::new("svg::empty_path", "its path draws nothing".to_owned())
@@ -258,7 +276,7 @@ impl Pen {
             }
         } else {
             let closing = Edge::line(self.end, start);
-            self.edges.push((closing, "the closing edge".to_owned()));
+            self.edges.push((closing, Piece::Closing));
         }
         Ok(self.edges)
     }

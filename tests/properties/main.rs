@@ -25,6 +25,9 @@ fn config() -> Config {
     if matches!(config.rng_seed, RngSeed::Random) {
         config.rng_seed = RngSeed::Fixed(1641);
     }
+    if std::env::var_os("PROPTEST_CASES").is_none() {
+        config.cases = 128;
+    }
     config
 }
 

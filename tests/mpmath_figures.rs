@@ -32,11 +32,32 @@ struct Figures {
 #[derive(Deserialize)]
 #[serde(tag = "kind", rename_all = "lowercase")]
 enum Piece {
-    Line { start: [f64; 2], end: [f64; 2] },
-    Arc { start: [f64; 2], end: [f64; 2], sweep: f64 },
-    Ellipse { start: [f64; 2], end: [f64; 2], a: [f64; 2], b: [f64; 2], from: f64, sweep: f64 },
-    Cubic { points: [[f64; 2]; 4] },
-    Parallel { base: Box<Piece>, distance: f64, start: [f64; 2], end: [f64; 2] },
+    Line {
+        start: [f64; 2],
+        end: [f64; 2],
+    },
+    Arc {
+        start: [f64; 2],
+        end: [f64; 2],
+        sweep: f64,
+    },
+    Ellipse {
+        start: [f64; 2],
+        end: [f64; 2],
+        a: [f64; 2],
+        b: [f64; 2],
+        from: f64,
+        sweep: f64,
+    },
+    Cubic {
+        points: [[f64; 2]; 4],
+    },
+    Parallel {
+        base: Box<Self>,
+        distance: f64,
+        start: [f64; 2],
+        end: [f64; 2],
+    },
 }
 
 impl Piece {
@@ -44,8 +65,19 @@ impl Piece {
         let v = DVec2::from_array;
         match self {
             Self::Line { start, end } => Edge::line(v(*start), v(*end)),
-            Self::Arc { start, end, sweep } => Edge::Arc(Arc { start: v(*start), end: v(*end), sweep: *sweep }),
-            Self::Ellipse { start, end, a, b, from, sweep } => Edge::Ellipse(EllipseArc {
+            Self::Arc { start, end, sweep } => Edge::Arc(Arc {
+                start: v(*start),
+                end: v(*end),
+                sweep: *sweep,
+            }),
+            Self::Ellipse {
+                start,
+                end,
+                a,
+                b,
+                from,
+                sweep,
+            } => Edge::Ellipse(EllipseArc {
                 start: v(*start),
                 end: v(*end),
                 axis_a: v(*a),
@@ -53,8 +85,15 @@ impl Piece {
                 from: *from,
                 sweep: *sweep,
             }),
-            Self::Cubic { points } => Edge::Bezier(Bezier { points: points.map(v) }),
-            Self::Parallel { base, distance, start, end } => Edge::Parallel(Parallel {
+            Self::Cubic { points } => Edge::Bezier(Bezier {
+                points: points.map(v),
+            }),
+            Self::Parallel {
+                base,
+                distance,
+                start,
+                end,
+            } => Edge::Parallel(Parallel {
                 base: match base.edge() {
                     Edge::Ellipse(ellipse) => Base::Ellipse(ellipse),
                     Edge::Bezier(bezier) => Base::Bezier(bezier),
@@ -71,7 +110,10 @@ impl Piece {
 impl Part {
     fn region(&self) -> Region {
         let mut loops = self.loops.iter().map(|pieces| {
-            let edges = pieces.iter().zip(0..).map(|(piece, tag)| (piece.edge(), tag));
+            let edges = pieces
+                .iter()
+                .zip(0..)
+                .map(|(piece, tag)| (piece.edge(), tag));
             Loop::new(edges).expect("the pieces share their ends")
         });
         let outer = loops.next().expect("a part has an outer loop");
@@ -88,8 +130,13 @@ impl Part {
         let matrix = |found: DMat3, wanted: [f64; 6]| {
             let [x, y, z] = [found.x_axis, found.y_axis, found.z_axis];
             let entries = [x.x, y.y, z.z, x.y, y.z, z.x];
-            let largest = wanted.iter().fold(0.0_f64, |most, entry| most.max(entry.abs()));
-            entries.iter().zip(wanted).fold(0.0_f64, |most, (a, b)| most.max((a - b).abs() / largest))
+            let largest = wanted
+                .iter()
+                .fold(0.0_f64, |most, entry| most.max(entry.abs()));
+            entries
+                .iter()
+                .zip(wanted)
+                .fold(0.0_f64, |most, (a, b)| most.max((a - b).abs() / largest))
         };
         [
             relative(found.section.area, figures.area),
@@ -123,7 +170,10 @@ fn two_hundred_random_parts_at_fifty_digits() {
         let class = worst.entry(&part.class).or_default();
         *class = class.max(error);
         if error.is_nan() || error > part.allowed {
-            wrong.push(format!("part {number} ({}, turned {}): {error:.1e}", part.class, part.revolve));
+            wrong.push(format!(
+                "part {number} ({}, turned {}): {error:.1e}",
+                part.class, part.revolve
+            ));
         }
     }
     for (class, error) in &worst {

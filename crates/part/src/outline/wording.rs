@@ -43,7 +43,7 @@ impl Wording {
         let value = metres / self.unit.metres();
         let text = format!("{value:.*e}", BOUND_DIGITS - 1);
         let nearest: f64 = text.parse().unwrap_or(value);
-        let place = last_place(&text);
+        let place = last_place(value);
         // What differs from round digits by the rounding of a computation is meant to be round.
         let slack = SAME * value.abs();
         let bound = if up && nearest < value - slack {
@@ -64,8 +64,9 @@ impl Wording {
     }
 }
 
-/// What one more in the last of [`BOUND_DIGITS`] digits of a number like `1.23456e7` comes to.
-fn last_place(text: &str) -> f64 {
+/// What one more in the last of [`BOUND_DIGITS`] digits of `value` comes to.
+fn last_place(value: f64) -> f64 {
+    let text = format!("{value:e}");
     let exponent = text
         .split_once('e')
         .and_then(|(_, e)| e.parse::<i32>().ok());

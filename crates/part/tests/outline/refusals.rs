@@ -3,6 +3,7 @@
 use crate::{Files, Refused};
 use part::Neighbours;
 use std::collections::BTreeSet;
+use std::fmt::Write;
 use std::io;
 
 /// The one fault of a part whose outline is `outline`, with these files.
@@ -398,7 +399,10 @@ fn a_table_with_many_faults_tells_the_first_ones() {
 
 #[test]
 fn hostile_drawings_end_soon() {
-    let attributes: String = (0..400_000).map(|n| format!(" a{n}=''")).collect();
+    let mut attributes = String::new();
+    for number in 0..400_000 {
+        write!(attributes, " a{number}=''").unwrap();
+    }
     let namespaces = "<g xmlns:a='a'>".repeat(100_000);
     let cases = [
         (

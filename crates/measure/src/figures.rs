@@ -28,7 +28,7 @@ const RUN: usize = 1024;
 /// Sums in the order volume, surface, first moments x y z, second moments xx yy zz xy yz zx.
 type Sums = [f64; 11];
 
-/// The figures of a mesh. They mean something where [`crate::audit`] finds it closed and oriented.
+/// The figures of a mesh. They mean something where [`crate::audit()`] finds it closed and oriented.
 pub fn figures(mesh: Triangles) -> Figures {
     let middle = mesh
         .bounds()

@@ -1,7 +1,7 @@
 //! What a triangle mesh says for itself, wherever it came from.
 //!
-//! Two opinions on its mass properties: [`parry`], the library's own, and [`figures`], this program's compensated sum; and an
-//! [`audit`] of whether the numbers mean anything. Triangles are counter-clockwise seen from outside; lengths are metres; a
+//! Two opinions on its mass properties: [`parry()`], the library's own, and [`figures()`], this program's compensated sum; and an
+//! [`audit()`] of whether the numbers mean anything. Triangles are counter-clockwise seen from outside; lengths are metres; a
 //! volume has its sign, negative for a mesh that is inside out.
 
 mod audit;

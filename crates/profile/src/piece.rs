@@ -7,7 +7,7 @@ use std::f64::consts::FRAC_PI_2;
 /// A piece of an edge on which r and z both run one way, so that it turns by a quarter at most.
 #[derive(Debug, Clone, Copy)]
 pub(crate) struct Piece {
-    /// Parameters of its ends, t[0] < t[1].
+    /// Parameters of its ends, `t[0] < t[1]`.
     pub(crate) t: [f64; 2],
     /// The ends; neighbouring pieces share them bit for bit.
     pub(crate) ends: [DVec2; 2],

@@ -41,7 +41,7 @@ pub struct Built {
 /// The closed loop of `outline`, or `None` and one more fault at least.
 ///
 /// `words_prefix` is what messages call it: `outline`, `void 1`; they give lengths in `unit`. Whether the loop is legal (does
-/// not cross itself, keeps on one side of the axis) is [`region`]'s to tell.
+/// not cross itself, keeps on one side of the axis) is [`region()`]'s to tell.
 pub fn build(
     outline: &Outline,
     words_prefix: &str,

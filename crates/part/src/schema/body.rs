@@ -15,7 +15,7 @@ pub(super) struct Body {
     /// Its name; each body has its own.
     #[schemars(length(min = 1))]
     name: String,
-    /// What it is made of: a designation in the table of materials, or a [[material]] of this file.
+    /// What it is made of: a designation in the table of materials, or a `[[material]]` of this file.
     #[schemars(length(min = 1))]
     material: Option<String>,
     /// Its density with a unit, in place of a material: `8800 kg/m3`.

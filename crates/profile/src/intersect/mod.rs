@@ -41,9 +41,9 @@ pub enum Meeting {
     },
     /// They run along each other.
     Overlap {
-        /// From where to where on the first edge, a[0] < a[1].
+        /// From where to where on the first edge, `a[0] < a[1]`.
         a: [f64; 2],
-        /// The same points on the second edge; b[0] > b[1] where they run opposite ways.
+        /// The same points on the second edge; `b[0] > b[1]` where they run opposite ways.
         b: [f64; 2],
     },
 }

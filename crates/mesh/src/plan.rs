@@ -66,6 +66,18 @@ pub(crate) struct BodyPlan {
 }
 
 impl BodyPlan {
+    /// Refuses more triangles than are allowed.
+    fn allow(&self, angle: f64, options: &Options) -> Result<(), MeshError> {
+        let triangles = self.triangles(angle);
+        if triangles > options.most_triangles {
+            return Err(MeshError::TooMany {
+                triangles,
+                allowed: options.most_triangles,
+            });
+        }
+        Ok(())
+    }
+
     /// Triangles that the plan leads to, end caps included.
     pub(crate) fn triangles(&self, angle: f64) -> u64 {
         let bands: u64 = self
@@ -162,19 +174,12 @@ fn body_within(
             .map(|l| corners(l, angle, options, share))
             .collect::<Result<Vec<_>, _>>()?;
         let plan = match options.placement {
-            Placement::VolumeTrue => area_true_rings(&chains, angle, volume, options, share),
+            Placement::VolumeTrue => area_true_rings(&chains, angle, volume, options, share)?,
             Placement::Inscribed | Placement::Circumscribed => {
                 one_sided_rings(&chains, angle, options, within)?
             }
         };
         if plan.deviation <= within || reserve > 0.7 {
-            let triangles = plan.triangles(angle);
-            if triangles > options.most_triangles {
-                return Err(MeshError::TooMany {
-                    triangles,
-                    allowed: options.most_triangles,
-                });
-            }
             return Ok(plan);
         }
         reserve += 0.1;
@@ -319,9 +324,9 @@ fn area_true_rings(
     volume: f64,
     options: &Options,
     within: f64,
-) -> BodyPlan {
+) -> Result<BodyPlan, MeshError> {
     let excess = |step: f64| area_true(step) - 1.0;
-    let mut loops: Vec<LoopPlan> = chains
+    let loops: Vec<LoopPlan> = chains
         .iter()
         .map(|outline| {
             let stations = outline.corners.iter().map(|corner| {
@@ -340,10 +345,19 @@ fn area_true_rings(
             }
         })
         .collect();
-    crate::correction::close_volume(&mut loops, angle, volume);
-    let stations = || loops.iter().flat_map(|l| &l.stations);
-    let deviation = stations().fold(0.0, |most: f64, station| most.max(station.deviation()));
-    BodyPlan { loops, deviation }
+    let mut plan = BodyPlan {
+        loops,
+        deviation: 0.0,
+    };
+    // Before the correction, which looks at every facet between unequal rings.
+    plan.allow(angle, options)?;
+    crate::correction::close_volume(&mut plan.loops, angle, volume);
+    plan.deviation = plan
+        .loops
+        .iter()
+        .flat_map(|l| &l.stations)
+        .fold(0.0, |most, station| station.deviation().max(most));
+    Ok(plan)
 }
 
 impl Corner {
@@ -422,7 +436,9 @@ fn one_sided_rings(
             })
             .collect();
         if deviation <= within {
-            return Ok(BodyPlan { loops, deviation });
+            let plan = BodyPlan { loops, deviation };
+            plan.allow(angle, options)?;
+            return Ok(plan);
         }
         let more = segments / 8 + 4;
         segments = if angle == TAU {

@@ -12,7 +12,7 @@ fn at(r: f64, z: f64) -> DVec2 {
 }
 
 fn outline(edges: Vec<Edge>) -> Loop {
-    Loop::new(edges.into_iter().zip(0..)).unwrap()
+    Loop::new(edges.into_iter().zip(0..)).expect("the edges share their ends")
 }
 
 fn polygon(corners: &[(f64, f64)]) -> Loop {
@@ -41,7 +41,7 @@ fn ball() -> Loop {
 fn parts() -> Vec<(&'static str, Region, f64)> {
     let frustum = |a: f64, b: f64, h: f64| PI * h / 3.0 * (a * a + a * b + b * b);
     let inner = 0.999;
-    let region = |outer: Loop| Region::new(outer, vec![]).unwrap();
+    let region = |outer: Loop| Region::new(outer, vec![]).expect("a handbook part is legal");
     let torus = outline(vec![
         arc(at(3.0, -1.0), at(3.0, 1.0), PI),
         arc(at(3.0, 1.0), at(3.0, -1.0), PI),
@@ -91,7 +91,7 @@ fn parts() -> Vec<(&'static str, Region, f64)> {
         ),
         (
             "ball with a void",
-            Region::new(ball(), vec![pierced]).unwrap(),
+            Region::new(ball(), vec![pierced]).expect("a handbook part is legal"),
             4.0 / 3.0 * PI - TAU * 0.4 * 0.03,
         ),
         (
@@ -174,8 +174,8 @@ fn cases() -> impl Iterator<Item = Case> {
                     angle,
                     &options,
                 )
-                .unwrap();
-                let mesh = plan.mesh().unwrap();
+                .expect("a handbook part is legal");
+                let mesh = plan.mesh().expect("a handbook part is legal");
                 let name = format!("{name} turned {angle:.2}, {}", placement.word());
                 Case {
                     name,

@@ -39,9 +39,6 @@ pub struct Options {
     pub least_segments: NonZeroU32,
     /// Greatest length of a triangle's edge, metres.
     pub greatest_edge: Option<f64>,
-    /// Greatest ratio of a triangle's longest edge to its height on that edge, where more rings or segments can give it;
-    /// above 2.
-    pub greatest_aspect: Option<f64>,
     /// Most triangles that may be made; more is an error that tells the number. Default 50 million.
     pub most_triangles: u64,
 }
@@ -54,7 +51,6 @@ impl Options {
             placement: Placement::default(),
             least_segments: NonZeroU32::new(12).expect("twelve is not zero"),
             greatest_edge: None,
-            greatest_aspect: None,
             most_triangles: 50_000_000,
         }
     }

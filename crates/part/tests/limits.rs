@@ -2,6 +2,7 @@
 
 use part::{Faults, Neighbours, read};
 use proptest::prelude::*;
+use std::fmt::Write;
 
 struct Nothing;
 
@@ -111,6 +112,64 @@ fn too_many_edges_are_refused() {
     assert!(
         codes(text).contains(&"limit::edges"),
         "the limit is the part's, not the body's"
+    );
+}
+
+#[test]
+fn outlines_too_intricate_to_be_checked_are_refused() {
+    // Arcs to and fro, one above the other, that bulge a hundred thousand times as far as they lie apart.
+    let mut steps = String::from("{ r = 10, z = 0 }");
+    for row in 0..2000 {
+        let r = if row % 2 == 0 { 20 } else { 10 };
+        let side = if row % 2 == 0 { "left" } else { "right" };
+        write!(
+            steps,
+            ", {{ r = {r}, z = {row}e-4, arc = 9, centre_on = \"{side}\" }}, {{ z = {row}.9e-4 }}"
+        )
+        .expect("a string takes all");
+    }
+    let text = format!("{HEAD}{BODY}outline = [ {steps}, {{ r = 5 }}, {{ z = 0 }} ]\n");
+    assert_eq!(codes(text), ["outline::too_intricate"]);
+}
+
+#[test]
+fn two_combs_through_each_other_are_told_once() {
+    let mut upright = String::from("{ r = 10, z = 0 }");
+    let mut lying = String::from("{ r = 9, z = 2 }");
+    for tooth in 0..300 {
+        let [r, next] = [tooth + 10, tooth + 11];
+        write!(
+            upright,
+            ", {{ r = {r}, z = 400 }}, {{ r = {r}.5 }}, {{ z = 1 }}, {{ r = {next} }}"
+        )
+        .expect("a string takes all");
+        let [z, next] = [tooth + 2, tooth + 3];
+        write!(
+            lying,
+            ", {{ r = 309, z = {z} }}, {{ z = {z}.5 }}, {{ r = 9.5 }}, {{ z = {next} }}"
+        )
+        .expect("a string takes all");
+    }
+    let text = format!(
+        "{HEAD}{BODY}outline = [ {upright}, {{ z = 0 }} ]\n{}outline = [ {lying}, {{ r = 9 }} ]\n",
+        BODY.replace("\"a\"", "\"b\"")
+    );
+    assert_eq!(codes(text), ["body::overlap"]);
+}
+
+#[test]
+fn of_many_corners_that_do_not_fit_a_hundred_are_tried() {
+    let mut steps = String::from("{ r = 10, z = 0 }");
+    for row in 1..1000 {
+        let r = if row % 2 == 0 { 20 } else { 12 };
+        write!(steps, ", {{ r = {r}, z = {row}, curve = [ {{ r = 14, z = {row} }}, {{ r = 17, z = {row} }} ], round = 90 }}").expect("a string takes all");
+    }
+    let text = format!("{HEAD}{BODY}outline = [ {steps}, {{ r = 10 }} ]\n");
+    let codes = codes(text);
+    assert_eq!(codes.len(), 100);
+    assert!(
+        codes.iter().all(|code| code.starts_with("corner::")),
+        "{codes:?}"
     );
 }
 

@@ -79,16 +79,6 @@ impl Boundary {
         &self.edges
     }
 
-    /// The pieces' tree; its items are indices for [`Boundary::edge_of_piece`].
-    pub(crate) fn tree(&self) -> &Tree {
-        &self.tree
-    }
-
-    /// Index of the edge that a piece belongs to.
-    pub(crate) fn edge_of_piece(&self, piece: u32) -> usize {
-        self.pieces[piece as usize].0 as usize
-    }
-
     /// The loop of the edge with this index over all loops, and its index there.
     pub(crate) fn place_of(&self, edge: usize) -> (usize, usize) {
         let outline = self.first.partition_point(|&first| first <= edge) - 1;
@@ -124,7 +114,7 @@ impl Boundary {
     pub(crate) fn nearest(&self, p: DVec2) -> Option<Found> {
         let mut best: Option<Found> = None;
         self.tree.nearest(p, f64::INFINITY, |piece| {
-            let edge = self.edge_of_piece(piece);
+            let edge = self.pieces[piece as usize].0 as usize;
             let probe = self.seekers[edge].probe(p);
             if best.is_none_or(|best| probe.distance_squared < best.distance_squared) {
                 best = Some(Found {

@@ -99,10 +99,13 @@ fn of_edge(edge: &Edge, origin: DVec2) -> Sums {
     let mut chords = 1_u32;
     for _ in 0..MOST_HALVINGS {
         chords *= 2;
-        let at = |i: u32| edge.point(f64::from(i) / f64::from(chords));
-        let finer = (0..chords)
-            .map(|i| chord(at(i), at(i + 1)))
-            .fold(Sums::default(), Sums::add);
+        let mut start = edge.start();
+        let mut finer = Sums::default();
+        for i in 1..=chords {
+            let end = edge.point(f64::from(i) / f64::from(chords));
+            finer = finer + chord(start, end);
+            start = end;
+        }
         let next = extrapolated(finer, &row);
         let (before, after) = (row[row.len() - 1], next[next.len() - 1]);
         row = next;
@@ -124,15 +127,17 @@ fn extrapolated(finer: Sums, before: &[Sums]) -> Vec<Sums> {
     row
 }
 
-/// True where the last step changed nothing that could be seen in the whole.
+/// True where the last step changed nothing that could be seen in the whole, or nothing but the rounding of the points.
 fn settled(before: Sums, after: Sums, edge: &Edge, origin: DVec2) -> bool {
     let change = after - before;
     let length = after.length;
     let reach = length + (edge.start() - origin).length();
-    change.length.abs() <= SETTLED * length
-        && change.length_r.abs() <= SETTLED * length * reach
-        && change.area.abs() <= SETTLED * length * reach
-        && change.area_r.abs() <= SETTLED * length * reach * reach
+    let rounding = 4.0 * f64::EPSILON * (length + edge.start().length());
+    let least = SETTLED * length + rounding;
+    change.length.abs() <= least
+        && change.length_r.abs() <= least * reach
+        && change.area.abs() <= least * reach
+        && change.area_r.abs() <= least * reach * reach
 }
 
 /// The sums of a straight line: its triangle with the origin has its centroid at a third of the corners' sum.

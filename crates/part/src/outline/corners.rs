@@ -1,5 +1,6 @@
 //! Rounds and chamfers.
 
+use super::MOST_FAULTS;
 use super::chain::Link;
 use super::origins::Origins;
 use super::step::{Corner, Step};
@@ -17,6 +18,7 @@ pub(super) fn treat_corners(
     wording: Wording,
     faults: &mut Vec<Fault>,
 ) {
+    let most = faults.len() + MOST_FAULTS;
     for at in 0..links.len() {
         let next = if at + 1 < links.len() { at + 1 } else { 0 };
         if !closed && next == 0 {
@@ -27,6 +29,9 @@ pub(super) fn treat_corners(
         };
         if let Err(fault) = treat(links, [at, next], corner, step, origins, wording) {
             faults.push(fault);
+            if faults.len() >= most {
+                return;
+            }
         }
     }
 }

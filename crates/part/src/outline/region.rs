@@ -141,6 +141,9 @@ impl Told<'_> {
             RegionFault::RunsAlong { first, second, from, to } => self
                 .two("outline::runs_along", [first, second], "runs along", &self.stretch(from, to))
                 .help("between the two there is no material; leave out the way there and back"),
+            RegionFault::TooIntricate { edge, at: point } => self
+                .one("outline::too_intricate", edge, "is one of too many curves nested too closely to be told apart, it starts", point)
+                .help("so many curves lie closer to each other than they bulge that checking them would take minutes; draw fewer, or divide them into shorter ones"),
             RegionFault::CrossesItself { edge, at: point } => self
                 .one("outline::crosses_itself", edge, "crosses itself", point)
                 .help("move its control points, or divide it into two steps"),

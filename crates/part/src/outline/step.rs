@@ -32,7 +32,8 @@ pub enum Side {
     Right,
 }
 
-/// A direction that gives the coordinate a step leaves out.
+/// A direction that gives the coordinate a step leaves out. Where r is left out, outward and inward hold whichever way along
+/// the axis the step goes; where z is left out it goes towards +z, and the sign must agree with what r does.
 #[derive(Debug, Clone, PartialEq)]
 pub enum Slope {
     /// `taper`: change of diameter over length; positive: outward with travel.
@@ -63,7 +64,7 @@ pub enum Kind {
     Via(Target, Span),
     /// `centre = {..}`.
     About(Centre),
-    /// `tangent = true`.
+    /// `tangent = true`: leaves as the step before arrived, whatever is done to the corner between them.
     Tangent(Span),
     /// `ellipse = "r"/"z"`.
     Ellipse {
@@ -109,7 +110,7 @@ pub struct Step {
     pub kind: Kind,
     /// What is done to the corner where it arrives; on the first step: where the outline closes.
     pub corner: Option<Corner>,
-    /// Name of the edge.
+    /// Name of the edge; on the first step: of the edge that closes the outline.
     pub name: Option<String>,
     /// What to call it in a message: `step 3`, `step 3 (round 2 of the repeat in step 5)`.
     pub words: String,
@@ -133,7 +134,7 @@ pub enum Outline {
         /// Place of the outline.
         span: Span,
     },
-    /// A path of an SVG file.
+    /// A path of an SVG file: r = x less the axis, z = -y.
     Svg {
         /// The file, as written.
         file: String,

@@ -72,6 +72,7 @@ pub(super) fn open<'s>(
     let corners = walk(steps, wording, faults);
     let mut links = Vec::with_capacity(steps.len());
     let mut arriving = None;
+    let mut is_known = true;
     let most = faults.len() + MOST_FAULTS;
     for (ends, step) in corners.points.windows(2).zip(steps.iter().skip(1)) {
         let [start, end] = *ends else { continue };
@@ -83,14 +84,18 @@ pub(super) fn open<'s>(
             rounding: corners.rounding,
             wording,
         };
+        // How a smooth arc would leave a step that cannot be drawn is not known.
+        if !is_known && matches!(step.kind, Kind::Tangent(_)) {
+            continue;
+        }
         match leg.draw() {
             Ok(drawn) => {
                 arriving = Some(drawn.last().tangent(1.0));
+                is_known = true;
                 links.push(Link::new(drawn, origins.step(step), step));
             }
             Err(fault) => {
-                // What a tangent arc after it would be is not known; a line's direction says whether there is one.
-                arriving = (start != end).then(|| (end - start).normalize());
+                is_known = false;
                 faults.push(fault);
                 if faults.len() >= most {
                     break;

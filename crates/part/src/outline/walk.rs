@@ -1,5 +1,6 @@
 //! Where the steps go: the corners of an outline, before anything is drawn between them.
 
+use super::MOST_FAULTS;
 use super::rounding::{ROUNDING, largest, on_axis};
 use super::slope::sloped;
 use super::step::{Coordinate, Kind, Step, Target};
@@ -86,9 +87,10 @@ pub(super) fn walk(steps: &[Step], wording: Wording, faults: &mut Vec<Fault>) ->
     }
 
     let size = largest(&points);
+    let most = faults.len() + MOST_FAULTS;
     for ((point, count), step) in points.iter_mut().zip(&increments).zip(steps) {
         point.x = on_axis(point.x, ROUNDING * count.r * size.x);
-        if point.x < 0.0 {
+        if point.x < 0.0 && faults.len() < most {
             faults.push(past_axis(step, *point, wording));
         }
     }

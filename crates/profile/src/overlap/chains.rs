@@ -7,10 +7,8 @@
 //! inside, being connected, would lie all in the other, and its boundary with it.
 
 use crate::boundary::Boundary;
-use crate::{Meeting, meetings};
+use crate::{Meeting, candidates, left_of, meetings};
 use glam::DVec2;
-use std::collections::HashSet;
-use std::ops::ControlFlow;
 
 /// A place where two bodies overlap.
 #[derive(Debug, Clone, Copy)]
@@ -26,6 +24,10 @@ pub(super) struct Evidence {
 /// As many places are enough to find one that is deep.
 const ENOUGH: usize = 64;
 
+/// When so many edges have been found to cross, the search for more ends: the bodies overlap, and where they cross is
+/// evidence enough.
+const MANY: usize = 1000;
+
 /// Pieces shorter than this many times the distance within which points are shared are part of a meeting.
 const SHORTEST: f64 = 8.0;
 
@@ -36,11 +38,14 @@ struct Cuts {
 
 /// Places where the bodies overlap, as far as their boundaries tell; none where they do not. Where edges cross, the first
 /// place names two that do.
-pub(super) fn evidence(both: [&Boundary; 2], within: f64) -> Vec<Evidence> {
+pub(super) fn evidence(both: [&Boundary; 2], within: f64) -> Result<Vec<Evidence>, [usize; 2]> {
     let mut cuts = both.map(|boundary| Cuts {
         of_edge: vec![Vec::new(); boundary.edges().len()],
     });
-    let crossing = cut(both, within, &mut cuts);
+    let crossing = match cut(both, within, &mut cuts)? {
+        Crossings::Many(evidence) => return Ok(evidence),
+        Crossings::First(edges) => edges,
+    };
     let mut found = Vec::new();
     for (body, cuts) in cuts.iter_mut().enumerate() {
         let (own, other) = (both[body], both[1 - body]);
@@ -72,39 +77,67 @@ pub(super) fn evidence(both: [&Boundary; 2], within: f64) -> Vec<Evidence> {
     if let (Some(first), Some(edges)) = (found.first_mut(), crossing) {
         first.edges = edges;
     }
-    found
+    Ok(found)
 }
 
-/// Notes where edges of the two boundaries meet; two edges that cross, the first in order of the first boundary.
-fn cut(both: [&Boundary; 2], within: f64, cuts: &mut [Cuts; 2]) -> Option<[usize; 2]> {
-    let mut asked = HashSet::new();
-    let mut crossings: Option<[usize; 2]> = None;
-    let [first, second] = both;
-    first.tree().pairs_with(second.tree(), |p, q| {
-        let edges = [first.edge_of_piece(p), second.edge_of_piece(q)];
-        if asked.insert(edges) {
-            let [a, b] = [first.edges()[edges[0]], second.edges()[edges[1]]];
-            for meeting in meetings(&a, &b, within) {
-                match meeting {
-                    Meeting::Point {
-                        t_a, t_b, crossing, ..
-                    } => {
-                        cuts[0].of_edge[edges[0]].push(t_a);
-                        cuts[1].of_edge[edges[1]].push(t_b);
-                        if crossing && crossings.is_none_or(|least| edges < least) {
-                            crossings = Some(edges);
-                        }
+/// Edges of the two boundaries that cross.
+enum Crossings {
+    /// The first two in order of the first boundary, if any do.
+    First(Option<[usize; 2]>),
+    /// So many that the search ended early: some of the places.
+    Many(Vec<Evidence>),
+}
+
+/// Notes where edges of the two boundaries meet.
+fn cut(both: [&Boundary; 2], within: f64, cuts: &mut [Cuts; 2]) -> Result<Crossings, [usize; 2]> {
+    let [first, second] = both.map(Boundary::edges);
+    let (pairs, is_whole) = match candidates::between(first, second, within) {
+        Ok(pairs) => (pairs, true),
+        Err(some) => (some, false),
+    };
+    let mut crossings: Vec<Evidence> = Vec::new();
+    for pair in &pairs {
+        let edges = pair.map(|edge| edge as usize);
+        let [a, b] = [first[edges[0]], second[edges[1]]];
+        for meeting in meetings(&a, &b, within) {
+            match meeting {
+                Meeting::Point {
+                    t_a,
+                    t_b,
+                    point,
+                    crossing,
+                } => {
+                    cuts[0].of_edge[edges[0]].push(t_a);
+                    cuts[1].of_edge[edges[1]].push(t_b);
+                    if crossing {
+                        // What both bodies share lies left of both edges.
+                        let inward = left_of(a.tangent(t_a)) + left_of(b.tangent(t_b));
+                        crossings.push(Evidence {
+                            at: point,
+                            inward: inward.normalize_or_zero(),
+                            edges,
+                        });
                     }
-                    Meeting::Overlap { a, b } => {
-                        cuts[0].of_edge[edges[0]].extend(a);
-                        cuts[1].of_edge[edges[1]].extend(b);
-                    }
+                }
+                Meeting::Overlap { a, b } => {
+                    cuts[0].of_edge[edges[0]].extend(a);
+                    cuts[1].of_edge[edges[1]].extend(b);
                 }
             }
         }
-        ControlFlow::Continue(())
-    });
-    crossings
+        if crossings.len() >= MANY {
+            break;
+        }
+    }
+    let first = crossings.first().map(|crossing| crossing.edges);
+    match pairs.first() {
+        Some(pair) if !is_whole && first.is_none() => Err(pair.map(|edge| edge as usize)),
+        _ if is_whole && crossings.len() < MANY => Ok(Crossings::First(first)),
+        _ => {
+            crossings.truncate(ENOUGH);
+            Ok(Crossings::Many(crossings))
+        }
+    }
 }
 
 /// What the point at `t` of an edge of `own`, the boundary of body number `body`, tells.
@@ -131,7 +164,7 @@ fn inside(
     }
     is_inside.then(|| Evidence {
         at,
-        inward: crate::left_of(direction),
+        inward: left_of(direction),
         edges,
     })
 }

@@ -30,6 +30,27 @@ pub struct BodyOverlap {
     pub edges: (EdgeRef, EdgeRef),
 }
 
+/// What is wrong between two bodies.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub enum BodyFault {
+    /// They overlap.
+    Overlap(BodyOverlap),
+    /// So many of their edges lie near each other, or so many bodies, that it cannot be asked in reasonable time whether
+    /// they overlap.
+    TooIntricate {
+        /// Indices of the two bodies, the lower first.
+        bodies: (usize, usize),
+        /// An edge of each of them.
+        edges: (EdgeRef, EdgeRef),
+    },
+}
+
+/// Pairs of bodies that are asked, by their boxes: far more than a part has that is no mistake.
+const MOST_PAIRS: usize = 100_000;
+
+/// Faults after which no more are looked for.
+const MOST_FAULTS: usize = 100;
+
 /// A body made ready where it is first asked.
 struct Body<'a> {
     region: &'a Region,
@@ -43,11 +64,11 @@ impl Body<'_> {
     }
 }
 
-/// The pairs of bodies that overlap, in order.
+/// What is wrong between bodies, in their order; the first 100 faults.
 ///
 /// Bodies may share faces, whole or in part, within [`TOUCH`](crate::TOUCH) of the larger one's extent; a body may fill a void of
 /// another one.
-pub fn overlaps(regions: &[&Region]) -> Vec<BodyOverlap> {
+pub fn overlaps(regions: &[&Region]) -> Vec<BodyFault> {
     let hulls: Vec<Hull> = regions
         .iter()
         .map(|region| {
@@ -66,36 +87,64 @@ pub fn overlaps(regions: &[&Region]) -> Vec<BodyOverlap> {
         .collect();
     let mut pairs = Vec::new();
     Tree::new(&hulls, 0.0).pairs(|a, b| {
-        pairs.push((a.min(b) as usize, a.max(b) as usize));
-        ControlFlow::Continue(())
+        pairs.push([a.min(b) as usize, a.max(b) as usize]);
+        if pairs.len() < MOST_PAIRS {
+            ControlFlow::Continue(())
+        } else {
+            ControlFlow::Break(())
+        }
     });
+    let unasked = pairs.get(MOST_PAIRS - 1).copied();
     pairs.sort_unstable();
-    pairs
+    let mut found: Vec<BodyFault> = pairs
         .into_iter()
-        .filter_map(|(i, j)| overlap([i, j], &bodies))
-        .collect()
+        .filter_map(|pair| fault(pair, &bodies))
+        .take(MOST_FAULTS)
+        .collect();
+    if let (true, Some(pair)) = (found.is_empty(), unasked) {
+        found.push(too_intricate(pair, &bodies, [0, 0]));
+    }
+    found
 }
 
-/// What two bodies share.
-fn overlap([i, j]: [usize; 2], bodies: &[Body<'_>]) -> Option<BodyOverlap> {
-    let both = [i, j].map(|body| bodies[body].boundary());
+/// What is wrong between two bodies.
+fn fault(pair: [usize; 2], bodies: &[Body<'_>]) -> Option<BodyFault> {
+    let both = pair.map(|body| bodies[body].boundary());
     let within = touch(both[0].bounds()).max(touch(both[1].bounds()));
-    let evidence = evidence(both, within);
+    let evidence = match evidence(both, within) {
+        Ok(evidence) => evidence,
+        Err(edges) => return Some(too_intricate(pair, bodies, edges)),
+    };
     let Evidence { edges, .. } = *evidence.first()?;
     let (place, depth) = deepest(both, &evidence);
-    let named = |body: usize| {
-        let (loop_index, edge) = both[body].place_of(edges[body]);
-        let outline = bodies[[i, j][body]].region.loops().nth(loop_index);
+    (depth > within).then(|| {
+        BodyFault::Overlap(BodyOverlap {
+            bodies: pair.into(),
+            place,
+            depth,
+            edges: named(pair, bodies, edges),
+        })
+    })
+}
+
+fn too_intricate(pair: [usize; 2], bodies: &[Body<'_>], edges: [usize; 2]) -> BodyFault {
+    BodyFault::TooIntricate {
+        bodies: pair.into(),
+        edges: named(pair, bodies, edges),
+    }
+}
+
+/// An edge of each of two bodies, by its place there.
+fn named(pair: [usize; 2], bodies: &[Body<'_>], edges: [usize; 2]) -> (EdgeRef, EdgeRef) {
+    let of = |which: usize| {
+        let body = &bodies[pair[which]];
+        let (loop_index, edge) = body.boundary().place_of(edges[which]);
+        let outline = body.region.loops().nth(loop_index);
         EdgeRef {
             loop_index,
             edge,
             tag: outline.map_or(0, |outline| outline.tags()[edge]),
         }
     };
-    (depth > within).then(|| BodyOverlap {
-        bodies: (i, j),
-        place,
-        depth,
-        edges: (named(0), named(1)),
-    })
+    (of(0), of(1))
 }

@@ -2,26 +2,13 @@
 
 use super::passing::Strand;
 use super::{EdgeRef, RegionFault};
-use crate::piece::{Hull, hulls};
-use crate::tolerance::touch;
-use crate::tree::Tree;
-use crate::{Bounds, Edge, Loop, Meeting, meetings};
+use crate::candidates::{self, Hulls, Pair};
+use crate::piece::Hull;
+use crate::{Edge, Loop, Meeting, meetings};
 use glam::DVec2;
-use std::collections::HashSet;
-use std::ops::ControlFlow;
 
 /// When so many meetings have been found the search ends: an outline that crosses itself a million times is not worth more.
 const ENOUGH: usize = 1000;
-
-/// Pairs of edges, for each edge on an average, that may be near each other by their boxes before curved edges are cut
-/// finer.
-const PATIENCE: usize = 8;
-
-/// Curved edges are not cut into more pieces than this together, to bound the memory,
-const MOST_HULLS: usize = 400_000;
-
-/// and no piece into more than this, where boxes are thinner than a hundred thousandth of their length.
-const FINEST: u32 = 64;
 
 /// How an edge takes part in meetings.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -65,15 +52,6 @@ struct Node {
     state: State,
 }
 
-/// The hulls of all edges' pieces, edge by edge.
-struct Hulls {
-    all: Vec<Hull>,
-    /// Of each hull, its edge's index among the nodes.
-    edge: Vec<u32>,
-    /// Of each edge, its first hull; and the number of hulls.
-    first: Vec<usize>,
-}
-
 /// Two edges that meet, by their indices in the network, the first the lower.
 #[derive(Debug, Clone, Copy)]
 struct Contact {
@@ -86,12 +64,6 @@ struct Contact {
 enum Kind {
     Point { at: DVec2, crossing: bool },
     Along { from: DVec2, to: DVec2 },
-}
-
-impl Hulls {
-    fn of(&self, edge: usize) -> &[Hull] {
-        &self.all[self.first[edge]..self.first[edge + 1]]
-    }
 }
 
 impl EdgeRef {
@@ -146,89 +118,46 @@ impl<'a> Network<'a> {
 
     /// The faults: all meetings but the corners that neighbours share.
     pub(super) fn faults(&self) -> Vec<RegionFault> {
-        let mut contacts = self.contacts();
+        let mut contacts = match self.contacts() {
+            Ok(contacts) => contacts,
+            Err(index) => {
+                return vec![RegionFault::TooIntricate {
+                    edge: self.nodes[index].named,
+                    at: self.edge(index).start(),
+                }];
+            }
+        };
         contacts.sort_by(|p, q| (p.edges.cmp(&q.edges)).then(p.t[0].total_cmp(&q.t[0])));
         self.merge(&mut contacts);
         contacts.iter().map(|contact| self.fault(contact)).collect()
     }
 
-    /// The hulls of the edges, each piece of a curved one cut into `parts`.
-    fn hulls(&self, parts: u32) -> Hulls {
-        let mut list = Hulls {
-            all: Vec::with_capacity(self.nodes.len()),
-            edge: Vec::with_capacity(self.nodes.len()),
-            first: vec![0],
+    /// All meetings but the corners that neighbours share, or an edge among too many that cannot be told apart.
+    fn contacts(&self) -> Result<Vec<Contact>, usize> {
+        let edges = (0..self.nodes.len())
+            .map(|index| (self.nodes[index].state == State::Good).then(|| self.edge(index)));
+        let margin = self.nodes.iter().map(|node| node.touch).fold(0.0, f64::max);
+        let (pairs, is_whole) = match candidates::within(&edges, margin, |hulls, pair| {
+            self.part_at_corner(hulls, pair)
+        }) {
+            Ok(pairs) => (pairs, true),
+            Err(some) => (some, false),
         };
-        for (number, index) in (0_u32..).zip(0..self.nodes.len()) {
-            if self.nodes[index].state == State::Good {
-                hulls(self.edge(index), parts, |hull| list.all.push(hull));
-            }
-            list.edge.resize(list.all.len(), number);
-            list.first.push(list.all.len());
-        }
-        list
-    }
-
-    /// All meetings but the corners that neighbours share.
-    ///
-    /// Curved edges close to each other are told apart only where their pieces' boxes are thin: where too many pairs of edges
-    /// have boxes that meet, the pieces are cut and the search starts anew.
-    fn contacts(&self) -> Vec<Contact> {
-        let mut parts = 1;
-        loop {
-            let hulls = self.hulls(parts);
-            let finer = MOST_HULLS / hulls.all.len().max(1);
-            let may_cut = parts < FINEST && finer > 1 && hulls.all.len() > self.nodes.len();
-            if let Some(found) = self.contacts_of(&hulls, may_cut) {
-                return found;
-            }
-            parts *= if finer >= 4 { 4 } else { 2 };
-        }
-    }
-
-    /// The meetings found by way of these hulls; `None` where too many pairs are to be asked and the hulls `may_cut`.
-    fn contacts_of(&self, hulls: &Hulls, may_cut: bool) -> Option<Vec<Contact>> {
         let mut found = Vec::new();
-        let bounds = (hulls.all.iter().flat_map(Hull::points))
-            .map(|&p| Bounds::of_point(p))
-            .reduce(Bounds::union);
-        let Some(bounds) = bounds else {
-            return Some(found);
-        };
-        let patience = PATIENCE * self.nodes.len();
-        let mut seen = HashSet::new();
-        let mut waiting: Vec<[usize; 2]> = Vec::new();
-        Tree::new(&hulls.all, touch(bounds)).pairs(|p, q| {
-            let edges = [p, q].map(|hull| hulls.edge[hull as usize] as usize);
-            let [a, b] = [edges[0].min(edges[1]), edges[0].max(edges[1])];
-            let is_single = hulls.of(a).len() * hulls.of(b).len() == 1;
-            if a == b || !(is_single || seen.insert([a, b])) || self.part_at_corner(hulls, a, b) {
-                return ControlFlow::Continue(());
+        for pair in &pairs {
+            if found.len() >= ENOUGH {
+                break;
             }
-            if may_cut {
-                waiting.push([a, b]);
-            } else {
-                self.ask(a, b, &mut found);
-            }
-            if waiting.len() <= patience && found.len() < ENOUGH {
-                ControlFlow::Continue(())
-            } else {
-                ControlFlow::Break(())
-            }
-        });
-        if waiting.len() > patience {
-            return None;
+            self.ask(pair.map(|edge| edge as usize), &mut found);
         }
-        for [a, b] in waiting {
-            if found.len() < ENOUGH {
-                self.ask(a, b, &mut found);
-            }
+        match pairs.first() {
+            Some(&[edge, _]) if !is_whole && found.is_empty() => Err(edge as usize),
+            _ => Ok(found),
         }
-        Some(found)
     }
 
     /// Adds the meetings of two edges.
-    fn ask(&self, a: usize, b: usize, found: &mut Vec<Contact>) {
+    fn ask(&self, [a, b]: [usize; 2], found: &mut Vec<Contact>) {
         let within = self.nodes[a].touch.max(self.nodes[b].touch);
         let follows = |next: usize, before: usize| self.nodes[before].neighbours[1] == next;
         for meeting in meetings(self.edge(a), self.edge(b), within) {
@@ -267,7 +196,8 @@ impl<'a> Network<'a> {
 
     /// Whether the two edges share one corner, and a straight line through it has all else of the one on one side and all
     /// else of the other on the other: then they meet nowhere else, and need not be followed.
-    fn part_at_corner(&self, hulls: &Hulls, a: usize, b: usize) -> bool {
+    fn part_at_corner(&self, hulls: &Hulls, pair: Pair) -> bool {
+        let [a, b] = pair.map(|edge| edge as usize);
         let (before, after) = match (
             self.nodes[a].neighbours[1] == b,
             self.nodes[b].neighbours[1] == a,
@@ -279,9 +209,9 @@ impl<'a> Network<'a> {
         let corner = self.edge(before).end();
         let away = |p: DVec2| (p - corner).normalize_or_zero();
         let across = away(self.edge(after).end()) - away(self.edge(before).start());
+        let of = |edge: usize| hulls.of(if edge == a { pair[0] } else { pair[1] });
         let all_beyond = |edge: usize, across: DVec2| {
-            hulls
-                .of(edge)
+            of(edge)
                 .iter()
                 .flat_map(Hull::points)
                 .filter(|&&p| p != corner)

@@ -86,6 +86,15 @@ pub enum RegionFault {
         /// Where it ends.
         to: DVec2,
     },
+    /// So many curved edges lie closer to each other than they bulge that it cannot be asked in reasonable time which of them
+    /// meet. Whether they do is not known.
+    #[error("edge {edge} is one of too many curved edges nested too closely, at {at}")]
+    TooIntricate {
+        /// One of them.
+        edge: EdgeRef,
+        /// Where it starts.
+        at: DVec2,
+    },
     /// An edge crosses or touches itself.
     #[error("edge {edge} crosses itself at {at}")]
     CrossesItself {
@@ -168,6 +177,7 @@ impl RegionFault {
         let (first, second) = match *self {
             Self::NotFinite { edge }
             | Self::NoLength { edge, .. }
+            | Self::TooIntricate { edge, .. }
             | Self::CrossesItself { edge, .. }
             | Self::TurnsBack { edge, .. }
             | Self::BelowAxis { edge, .. } => (Some(edge), None),
@@ -193,6 +203,7 @@ impl RegionFault {
             | Self::Crosses { at, .. }
             | Self::Touches { at, .. }
             | Self::RunsAlong { from: at, .. }
+            | Self::TooIntricate { at, .. }
             | Self::CrossesItself { at, .. }
             | Self::TurnsBack { at, .. }
             | Self::BelowAxis { at, .. }

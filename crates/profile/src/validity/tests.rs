@@ -78,6 +78,7 @@ fn told(faults: &[RegionFault]) -> (&'static str, Vec<usize>, (f64, f64)) {
         RegionFault::NoArea { .. } => "no area",
         RegionFault::VoidOutside { .. } => "void outside",
         RegionFault::VoidInVoid { .. } => "void in void",
+        RegionFault::TooIntricate { .. } => "too intricate",
     };
     let place = fault.place().unwrap_or(DVec2::ZERO);
     let rounded = |x: f64| (x * 1e9).round() / 1e9;
@@ -571,4 +572,40 @@ proptest! {
         let crosses = |fault: &RegionFault| matches!(fault, RegionFault::Crosses { .. });
         prop_assert!(faults.iter().any(crosses), "{faults:?}");
     }
+}
+
+/// Rows of arcs nested at `spacing`, walked to and fro, and the way back around them.
+fn nested_arcs(rows: u32, spacing: f64) -> Loop {
+    let mut edges = Vec::new();
+    let width = f64::from(rows) * spacing;
+    for row in 0..rows {
+        let [z, above] = [row, row + 1].map(|row| f64::from(row) * spacing);
+        let (left, right) = ((1.0, z), (2.0, z));
+        let (from, to, sweep) = if row % 2 == 0 {
+            (left, right, -1.0)
+        } else {
+            (right, left, 1.0)
+        };
+        edges.push(arc(from, to, sweep));
+        edges.push(line(to, (to.0, above)));
+    }
+    edges.push(line((1.0, width), (0.5, width)));
+    edges.push(line((0.5, width), (0.5, 0.0)));
+    edges.push(line((0.5, 0.0), (1.0, 0.0)));
+    tagged(edges)
+}
+
+#[test]
+fn arcs_nested_within_their_bulge_are_told_apart() {
+    let outline = nested_arcs(300, 1e-4);
+    assert!(Region::new(outline.reversed(), Vec::new()).is_ok());
+}
+
+#[test]
+fn too_many_arcs_nested_too_closely_are_refused_before_they_cost() {
+    let faults = of_outline(nested_arcs(3000, 1e-9));
+    assert!(
+        matches!(faults[..], [RegionFault::TooIntricate { .. }]),
+        "{faults:?}"
+    );
 }

@@ -188,7 +188,8 @@ impl Sums<f64> {
             0.5 * rrzz,
         ];
         let values = means.map(|mean| mean * dz);
-        self.add(values, values[0].abs());
+        // Not the value's own size: rounding is that of the ends, which may lie on both sides of the origin.
+        self.add(values, 0.5 * (p.x.abs() + q.x.abs()) * dz.abs());
     }
 }
 

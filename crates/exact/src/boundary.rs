@@ -34,20 +34,38 @@ pub(crate) fn line_moments(edge: &Edge, z0: f64) -> LineMoments {
             closed(length, middle)
         }
         _ => {
-            let whole = on_one_panel(edge, z0);
-            halves(edge, z0, whole, SETTLED * whole.length, MOST_HALVINGS)
+            let whole = on_panel(edge, z0, [0.0, 1.0]);
+            halves(
+                edge,
+                z0,
+                [0.0, 1.0],
+                whole,
+                SETTLED * whole.length,
+                MOST_HALVINGS,
+            )
         }
     }
 }
 
-fn halves(edge: &Edge, z0: f64, whole: LineMoments, allowed: f64, depth: u32) -> LineMoments {
-    let parts = [edge.part(0.0, 0.5), edge.part(0.5, 1.0)];
-    let [a, b] = [on_one_panel(&parts[0], z0), on_one_panel(&parts[1], z0)];
+/// The moments between two parameters, of which `whole` is the first result.
+fn halves(
+    edge: &Edge,
+    z0: f64,
+    [from, to]: [f64; 2],
+    whole: LineMoments,
+    allowed: f64,
+    depth: u32,
+) -> LineMoments {
+    let middle = 0.5 * (from + to);
+    let parts = [[from, middle], [middle, to]];
+    let [a, b] = parts.map(|part| on_panel(edge, z0, part));
     let sum = a.plus(b);
     if depth == 0 || (sum.length - whole.length).abs() <= allowed {
         return sum;
     }
-    halves(&parts[0], z0, a, allowed, depth - 1).plus(halves(&parts[1], z0, b, allowed, depth - 1))
+    let [a, b] = [(parts[0], a), (parts[1], b)]
+        .map(|(part, moments)| halves(edge, z0, part, moments, allowed, depth - 1));
+    a.plus(b)
 }
 
 impl LineMoments {
@@ -60,12 +78,14 @@ impl LineMoments {
     }
 }
 
-fn on_one_panel(edge: &Edge, z0: f64) -> LineMoments {
+fn on_panel(edge: &Edge, z0: f64, [from, to]: [f64; 2]) -> LineMoments {
+    let width = to - from;
     SINGLE
         .panel
         .iter()
-        .fold(LineMoments::default(), |sum, &(t, weight)| {
-            let (p, ds) = (edge.point(t), weight * edge.derivative(t).length());
+        .fold(LineMoments::default(), |sum, &(x, weight)| {
+            let t = from + x * width;
+            let (p, ds) = (edge.point(t), weight * width * edge.derivative(t).length());
             sum.plus(LineMoments {
                 length: ds,
                 r: p.x * ds,

@@ -132,6 +132,20 @@ impl<R: Real> Curve<R> for Cubic<R> {
     }
 }
 
+impl<R: Real> Cubic<R> {
+    /// How it sets off where its first control point lies on its start, and arrives where its last one lies on its end: from
+    /// the one control point to the other, and where they are the same along the chord.
+    fn direction(&self) -> Pair<R> {
+        let [a, b, c, d] = self.points;
+        let (near, far) = (c.minus(b), d.minus(a));
+        if near.length().rounded() == 0.0 {
+            far
+        } else {
+            near
+        }
+    }
+}
+
 /// A parallel curve: base + distance times the left normal, its derivative the base's times 1 - distance * curvature.
 pub(crate) struct Beside<R> {
     base: Bases<R>,
@@ -182,6 +196,15 @@ impl<R: Real> Curve<R> for Beside<R> {
         };
         let second = self.second(t);
         let speed = first.length();
+        if speed.rounded() == 0.0 {
+            // A cubic whose control point lies on its end.
+            let along = match &self.base {
+                Bases::Elliptic(_) => second,
+                Bases::Cubic(cubic) => cubic.direction(),
+            };
+            let normal = along.left().times(self.distance.over(along.length()));
+            return (place.plus(normal), first);
+        }
         let curvature = (first.r * second.z - first.z * second.r).over(speed * speed * speed);
         (
             place.plus(first.left().times(self.distance.over(speed))),

@@ -11,6 +11,10 @@ pub struct Bezier {
     pub points: [DVec2; 4],
 }
 
+/// A knot nearer to an end than this is the end's: about a stall a curve moves by the square of the parameter, which here is
+/// less than rounding.
+const NEAREST: f64 = 1e-8;
+
 impl Bezier {
     /// The parabola from `start` to `end` whose end tangents meet in `control`.
     pub fn parabola(start: DVec2, control: DVec2, end: DVec2) -> Self {
@@ -101,6 +105,8 @@ impl Bezier {
         // A cusp, or on a straight Bezier the point where it turns back, is where the speed is least.
         let slowest = [v[1], 2.0 * v[2], 3.0 * v[3], 4.0 * v[4]];
         knots.extend_from_slice(&sign_changes(&slowest, 0.0, 1.0));
+        // A curve that stalls in an end has the end itself as a knot, to rounding inside.
+        knots.retain(|t| (NEAREST..=1.0 - NEAREST).contains(t));
         knots.sort_by(f64::total_cmp);
         knots.dedup();
         knots

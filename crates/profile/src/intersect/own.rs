@@ -111,7 +111,9 @@ fn of_parallel(parallel: Parallel) -> Vec<(f64, f64)> {
         }
     }
     let cusps = parallel.cusps();
-    found.retain(|(t0, t1)| !is_fold(&edge, *t0, *t1, &cusps, 4.0 * within));
+    found.retain(|(t0, t1)| {
+        !stays(&edge, *t0, *t1, 4.0 * within) && !is_fold(&edge, *t0, *t1, &cusps, 4.0 * within)
+    });
     found.sort_by(|p, q| p.0.total_cmp(&q.0));
     // The same point found from both sides of a cut.
     found.dedup_by(|q, p| {
@@ -119,6 +121,14 @@ fn of_parallel(parallel: Parallel) -> Vec<(f64, f64)> {
         near && (p.1 - q.1).abs() < 0.5 * (p.1 - p.0)
     });
     found
+}
+
+/// True where the edge does not leave its place from `t0` to `t1`: between two cuts that are one, to rounding.
+fn stays(edge: &Edge, t0: f64, t1: f64, within: f64) -> bool {
+    let place = edge.point(t0);
+    [0.25, 0.5, 0.75, 1.0]
+        .into_iter()
+        .all(|share| edge.point(t0 + share * (t1 - t0)).distance(place) <= within)
 }
 
 /// True where the edge from `t0` to `t1` only runs to a cusp and back along itself, to rounding: at its tip a cusp is

@@ -433,6 +433,30 @@ fn mirrored_through(edge: &Edge, centre: crate::DVec2) -> Edge {
     }
 }
 
+/// The curvature of this Bezier is greatest in its middle, which rounding makes two cuts of.
+#[test]
+fn a_curve_beside_a_symmetric_bezier_does_not_meet_itself() {
+    let base = bezier([(6.0, 4.0), (8.0, 4.0), (10.0, 2.0), (10.0, 0.0)]);
+    for distance in [-1.0, -1e-2, -1e-4, -1e-6, 1e-6, 1e-4] {
+        assert_eq!(self_meetings(&parallel(&base, distance)), []);
+    }
+}
+
+/// A control point on an end: the curvature grows without bound towards it, and on the outside nothing turns back.
+#[test]
+fn a_curve_beside_a_bezier_that_stalls_in_an_end_is_legal_on_the_outside() {
+    let base = bezier([(1.0, 0.0), (1.7, 0.2), (1.2, 1.0), (1.2, 1.0)]);
+    for base in [base, base.reversed()] {
+        let outside = if base.start().x == 1.0 { -1.0 } else { 1.0 };
+        for (distance, is_legal) in [(outside * 1e-2, true), (outside * -1e-2, false)] {
+            let Edge::Parallel(parallel) = parallel(&base, distance) else {
+                panic!("a curve beside a Bezier is a parallel curve");
+            };
+            assert_eq!(parallel.least_speed_ratio().0 > 0.0, is_legal);
+        }
+    }
+}
+
 #[test]
 fn a_loop_meets_itself() {
     // Symmetric about x = 0: B(t0).x = B(1 - t0).x = 0.

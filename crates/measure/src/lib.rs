@@ -5,14 +5,16 @@
 //! volume has its sign, negative for a mesh that is inside out.
 
 mod audit;
+mod crossings;
 mod figures;
 mod parry;
 mod weld;
 
 pub use audit::{Audit, audit};
+pub use crossings::{Crossings, crossings};
 pub use figures::{Figures, figures};
 pub use parry::{Disagreement, Parry, compare, parry};
-pub use weld::{Welded, weld_equal};
+pub use weld::{Welded, Welder};
 
 use glam::DVec3;
 

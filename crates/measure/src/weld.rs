@@ -2,6 +2,7 @@
 
 use crate::Triangles;
 use glam::DVec3;
+use rustc_hash::FxBuildHasher;
 use std::collections::HashMap;
 
 /// An indexed mesh made from loose facets.
@@ -23,23 +24,45 @@ impl Welded {
     }
 }
 
-/// Joins facets where their corners are equal bit for bit (0 and -0 are equal): right for a file whose writer writes one
-/// corner the same way each time. Corners are numbered in the order in which they appear.
-pub fn weld_equal(facets: &[[DVec3; 3]]) -> Welded {
-    let mut welded = Welded {
-        positions: Vec::with_capacity(facets.len() / 2 + 2),
-        triangles: Vec::with_capacity(facets.len()),
-    };
-    let mut numbers: HashMap<[u64; 3], u32> = HashMap::with_capacity(facets.len() / 2 + 2);
-    for facet in facets {
-        let triangle = facet.map(|corner| {
-            let key = corner.to_array().map(|x| (x + 0.0).to_bits());
-            *numbers.entry(key).or_insert_with(|| {
-                welded.positions.push(corner);
-                u32::try_from(welded.positions.len() - 1).unwrap_or(u32::MAX)
-            })
-        });
-        welded.triangles.push(triangle);
+/// Joins facets, one after the other, where their corners are equal bit for bit (0 and -0 are equal): right for a file whose
+/// writer writes one corner the same way each time. Corners are numbered in the order in which they appear.
+#[derive(Debug, Default)]
+pub struct Welder {
+    welded: Welded,
+    numbers: HashMap<[u64; 3], u32, FxBuildHasher>,
+}
+
+impl Welder {
+    /// A welder with room for `facets`.
+    pub fn with_room(facets: usize) -> Self {
+        // A closed surface has half as many corners as triangles.
+        let corners = facets / 2 + 2;
+        Self {
+            welded: Welded {
+                positions: Vec::with_capacity(corners),
+                triangles: Vec::with_capacity(facets),
+            },
+            numbers: HashMap::with_capacity_and_hasher(corners, FxBuildHasher),
+        }
     }
-    welded
+
+    /// Adds a facet.
+    pub fn add(&mut self, facet: [DVec3; 3]) {
+        let Welded {
+            positions,
+            triangles,
+        } = &mut self.welded;
+        triangles.push(facet.map(|corner| {
+            let key = corner.to_array().map(|x| (x + 0.0).to_bits());
+            *self.numbers.entry(key).or_insert_with(|| {
+                positions.push(corner);
+                u32::try_from(positions.len() - 1).unwrap_or(u32::MAX)
+            })
+        }));
+    }
+
+    /// The mesh.
+    pub fn finish(self) -> Welded {
+        self.welded
+    }
 }

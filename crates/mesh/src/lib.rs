@@ -7,12 +7,14 @@
 //! A [`Plan`] fixes the rings: where they stand along the section, how many segments each has, within the distance asked for.
 //! It knows the mesh's triangle count, volume, centre and inertia in closed form; [`Plan::mesh`] then makes the triangles.
 
+mod aspect;
 mod cap;
 mod clearance;
 mod correction;
 mod fit;
 mod meridian;
 mod moments;
+mod one_sided;
 mod options;
 mod plan;
 mod predict;

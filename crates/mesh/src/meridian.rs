@@ -24,6 +24,8 @@ pub(crate) struct Division {
     pub(crate) greatest_turn: f64,
     /// Greatest length of a chord, metres.
     pub(crate) greatest_chord: f64,
+    /// A place nearer to the axis than this is on it, metres.
+    pub(crate) axis: f64,
     /// Chords beyond which the mesh would break the limit on triangles whatever its rings' counts.
     pub(crate) most_pieces: u64,
 }
@@ -74,7 +76,7 @@ pub(crate) fn divide(edge: &Edge, division: &Division) -> Result<Chain, MeshErro
         }));
         return Ok(chain);
     }
-    for span in spans(edge, division.placement) {
+    for span in spans(edge, division) {
         divide_span(edge, span, division, &mut chain)?;
     }
     Ok(chain)
@@ -103,9 +105,12 @@ fn pieces_of(ratio: f64) -> u32 {
     ratio.ceil().clamp(1.0, 1e9) as u32
 }
 
-/// Parameters between which the edge turns one way only (and, where asked, its normal does not pass the axis' direction).
-fn spans(edge: &Edge, placement: Placement) -> Vec<[f64; 2]> {
+/// Parameters between which the edge turns one way only, does not touch the axis and, where asked, its normal does not pass the
+/// axis' direction.
+fn spans(edge: &Edge, division: &Division) -> Vec<[f64; 2]> {
     let mut cuts = vec![0.0, 1.0];
+    let touching = standstills(edge, |tangent| tangent.x).into_iter();
+    cuts.extend(touching.filter(|t| edge.point(*t).x <= division.axis));
     if let Edge::Bezier(bezier)
     | Edge::Parallel(profile::Parallel {
         base: Base::Bezier(bezier),
@@ -114,8 +119,8 @@ fn spans(edge: &Edge, placement: Placement) -> Vec<[f64; 2]> {
     {
         cuts.extend(inflections(*bezier));
     }
-    if placement != Placement::VolumeTrue {
-        cuts.extend(level_points(edge));
+    if division.placement != Placement::VolumeTrue {
+        cuts.extend(standstills(edge, |tangent| tangent.y));
     }
     cuts.retain(|t| (0.0..=1.0).contains(t));
     cuts.sort_by(f64::total_cmp);
@@ -151,26 +156,30 @@ fn roots(a: f64, b: f64, c: f64) -> impl Iterator<Item = f64> {
     .flatten()
 }
 
-/// Parameters at which the edge runs along r, by bisection between samples finer than half a turn of any edge kind.
-fn level_points(edge: &Edge) -> Vec<f64> {
-    let slope = |t: f64| edge.tangent(t).y;
+/// Parameters at which a component of the direction changes its sign, by bisection between samples finer than half a turn of
+/// any edge kind.
+fn standstills(edge: &Edge, component: impl Fn(DVec2) -> f64) -> Vec<f64> {
+    let slope = |t: f64| component(edge.tangent(t));
     let grid = |i: usize| i as f64 / PANELS as f64;
-    (0..PANELS)
-        .filter(|&i| slope(grid(i)) * slope(grid(i + 1)) < 0.0)
-        .map(|i| {
-            let (mut low, mut high) = (grid(i), grid(i + 1));
-            let rising = slope(high) > 0.0;
+    let mut found = Vec::new();
+    for i in 0..PANELS {
+        let (mut low, mut high) = (grid(i), grid(i + 1));
+        let (before, after) = (slope(low), slope(high));
+        if after == 0.0 && i + 1 < PANELS {
+            found.push(high);
+        } else if before * after < 0.0 {
             for _ in 0..60 {
                 let middle = 0.5 * (low + high);
-                if (slope(middle) > 0.0) == rising {
+                if (slope(middle) > 0.0) == (after > 0.0) {
                     high = middle;
                 } else {
                     low = middle;
                 }
             }
-            0.5 * (low + high)
-        })
-        .collect()
+            found.push(0.5 * (low + high));
+        }
+    }
+    found
 }
 
 /// F tabulated over a span, for placing nodes at equal shares of it.
@@ -254,6 +263,12 @@ fn divide_span(
         };
         let deviation = deviation(edge, &nodes);
         if deviation <= division.within {
+            let mut nodes = nodes;
+            for (_, node) in &mut nodes {
+                if node.at.x <= division.axis {
+                    node.at.x = 0.0;
+                }
+            }
             let origin = edge.point(span[0]).x;
             let parameters: Vec<f64> = nodes.iter().map(|(t, _)| *t).collect();
             chain.moment_excess +=

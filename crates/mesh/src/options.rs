@@ -39,6 +39,8 @@ pub struct Options {
     pub least_segments: NonZeroU32,
     /// Greatest length of a triangle's edge, metres.
     pub greatest_edge: Option<f64>,
+    /// Greatest ratio of a triangle's longest edge to its height over that edge, for the swept faces; not all parts can keep less than 6.
+    pub greatest_aspect: Option<f64>,
     /// Most triangles that may be made; more is an error that tells the number. Default 50 million.
     pub most_triangles: u64,
 }
@@ -51,6 +53,7 @@ impl Options {
             placement: Placement::default(),
             least_segments: NonZeroU32::new(12).expect("twelve is not zero"),
             greatest_edge: None,
+            greatest_aspect: None,
             most_triangles: 50_000_000,
         }
     }
@@ -82,6 +85,12 @@ pub enum MeshError {
         least: u64,
         /// Triangles asked for.
         asked: u64,
+    },
+    /// No division of the rings has been found that keeps the aspect ratio.
+    #[error("no mesh of this part keeps its triangles' aspect ratio within {asked}")]
+    Aspect {
+        /// The ratio asked for.
+        asked: f64,
     },
     /// Walls come so close to each other that no mesh of allowed size keeps them apart.
     #[error(

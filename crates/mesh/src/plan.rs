@@ -1,9 +1,10 @@
 //! A body as rings: which circles the mesh stands on and how many segments each has, before a triangle is made.
 
 use crate::meridian::{Division, Node, divide};
+use crate::one_sided::one_sided_rings;
 use crate::ring::{Circle, area_true, segments};
 use crate::{MeshError, Options, Placement};
-use profile::{DVec2, Edge, Loop, Region, trig};
+use profile::{DVec2, Edge, Loop, Region};
 use std::f64::consts::TAU;
 
 /// A ring of the mesh, or a point of it on the axis.
@@ -67,7 +68,7 @@ pub(crate) struct BodyPlan {
 
 impl BodyPlan {
     /// Refuses more triangles than are allowed.
-    fn allow(&self, angle: f64, options: &Options) -> Result<(), MeshError> {
+    pub(crate) fn allow(&self, angle: f64, options: &Options) -> Result<(), MeshError> {
         let triangles = self.triangles(angle);
         if triangles > options.most_triangles {
             return Err(MeshError::TooMany {
@@ -98,12 +99,15 @@ impl BodyPlan {
 
 /// A node of the chain with what the ring on it has to answer for.
 #[derive(Debug, Clone, Copy)]
-struct Corner {
-    at: DVec2,
-    circle: Circle,
+pub(crate) struct Corner {
+    pub(crate) at: DVec2,
+    pub(crate) circle: Circle,
     /// Meridional distance already spent on either side.
-    spent: f64,
-    edge: u32,
+    pub(crate) spent: f64,
+    /// The edge that starts or runs on here.
+    pub(crate) edge: u32,
+    /// Least number of segments of its ring, over the part's angle.
+    pub(crate) least: u32,
 }
 
 /// Cosine of the angle between two faces' normals above which the profile counts as running on smoothly: 0.08 degrees.
@@ -132,7 +136,7 @@ pub(crate) fn body(
     // The part's own extent is bound enough: beyond it the plainest mesh is made.
     let mut within = options.within.min(extent);
     loop {
-        let plan = body_within(region, angle, volume, options, within)?;
+        let plan = body_within(region, [angle, volume, extent], options, within)?;
         match crate::clearance::first_conflict(&plan) {
             None => return Ok(plan),
             // Finer until every face keeps clear of the others.
@@ -156,8 +160,7 @@ const LEAST_SHARE: f64 = 1e-6;
 
 fn body_within(
     region: &Region,
-    angle: f64,
-    volume: f64,
+    [angle, volume, extent]: [f64; 3],
     options: &Options,
     within: f64,
 ) -> Result<BodyPlan, MeshError> {
@@ -171,12 +174,18 @@ fn body_within(
         };
         let chains = region
             .loops()
-            .map(|l| corners(l, angle, options, share))
+            .map(|l| corners(l, options, share, extent))
             .collect::<Result<Vec<_>, _>>()?;
-        let plan = match options.placement {
-            Placement::VolumeTrue => area_true_rings(&chains, angle, volume, options, share)?,
+        let rings = |chains: &[Outline]| match options.placement {
+            Placement::VolumeTrue => area_true_rings(chains, angle, volume, options, share),
             Placement::Inscribed | Placement::Circumscribed => {
-                one_sided_rings(&chains, angle, options, within)?
+                one_sided_rings(chains, angle, options, within)
+            }
+        };
+        let plan = match options.greatest_aspect {
+            None => rings(&chains)?,
+            Some(asked) => {
+                crate::aspect::kept(asked, &chains, angle, options.most_triangles, rings)?
             }
         };
         if plan.deviation <= within || reserve > 0.7 {
@@ -187,17 +196,20 @@ fn body_within(
 }
 
 /// One loop's corners, and its chains' moment errors.
-struct Outline {
-    corners: Vec<Corner>,
-    meridional: Vec<f64>,
+#[derive(Debug, Clone)]
+pub(crate) struct Outline {
+    pub(crate) corners: Vec<Corner>,
+    pub(crate) meridional: Vec<f64>,
+    /// Of each edge, the greatest distance of its chain from it.
+    pub(crate) spent: Vec<f64>,
 }
 
 /// Divides the edges of a loop.
 fn corners(
     outline: &Loop,
-    angle: f64,
     options: &Options,
     within: f64,
+    extent: f64,
 ) -> Result<Outline, MeshError> {
     let on_axis =
         |edge: &Edge| edge.start().x == 0.0 && edge.end().x == 0.0 && matches!(edge, Edge::Line(_));
@@ -208,10 +220,10 @@ fn corners(
         greatest_chord: options
             .greatest_edge
             .map_or(f64::INFINITY, |edge| edge * std::f64::consts::FRAC_1_SQRT_2),
+        axis: profile::TOUCH * extent,
         // Fewer rings than this many are always allowed; more would break the limit on triangles whatever their counts.
         most_pieces: options.most_triangles / u64::from(options.least_segments.get().max(3)) + 2,
     };
-    let _ = angle;
     let edges = outline.edges();
     let chains = edges
         .iter()
@@ -226,6 +238,10 @@ fn corners(
     let mut found = Outline {
         corners: Vec::new(),
         meridional: Vec::new(),
+        spent: chains
+            .iter()
+            .map(|chain| chain.as_ref().map_or(0.0, |chain| chain.deviation))
+            .collect(),
     };
     for (i, edge) in edges.iter().enumerate() {
         let before = if i == 0 { edges.len() - 1 } else { i - 1 };
@@ -237,6 +253,7 @@ fn corners(
                 circle: AXIS,
                 spent: spent_before,
                 edge: number,
+                least: 0,
             });
             found.meridional.push(0.0);
             continue;
@@ -256,6 +273,7 @@ fn corners(
                 circle,
                 spent,
                 edge: number,
+                least: 0,
             });
         }
         found.meridional.push(chain.moment_excess);
@@ -297,9 +315,9 @@ fn circle_at(node: &Node, arriving: Option<DVec2>, arriving_curvature: f64) -> C
     }
 }
 
-/// Count of a ring whose circle may be missed by `within`.
-fn count(
-    circle: Circle,
+/// Count of the ring on a corner whose circle may be missed by `within`.
+pub(crate) fn count(
+    corner: &Corner,
     angle: f64,
     options: &Options,
     within: f64,
@@ -307,7 +325,7 @@ fn count(
 ) -> u32 {
     let least = options.least_segments.get();
     let by_length = options.greatest_edge.map_or(0.0, |edge| {
-        circle.radius * TAU / (edge * std::f64::consts::FRAC_1_SQRT_2)
+        corner.circle.radius * TAU / (edge * std::f64::consts::FRAC_1_SQRT_2)
     });
     #[expect(
         clippy::cast_possible_truncation,
@@ -315,7 +333,16 @@ fn count(
         reason = "clamped to the range of u32"
     )]
     let least = least.max(by_length.ceil().clamp(0.0, 4e8) as u32);
-    segments(circle, angle, least, within, excess)
+    let own = segments(corner.circle, angle, least, within - corner.spent, excess);
+    if corner.least <= own {
+        return own;
+    }
+    // A full turn's count stays a multiple of four.
+    if angle == TAU {
+        corner.least.next_multiple_of(4)
+    } else {
+        corner.least
+    }
 }
 
 fn area_true_rings(
@@ -333,7 +360,7 @@ fn area_true_rings(
                 if corner.at.x <= 0.0 {
                     return pole(corner);
                 }
-                let segments = count(corner.circle, angle, options, within - corner.spent, excess);
+                let segments = count(corner, angle, options, within, excess);
                 corner.ring(
                     segments,
                     corner.at * DVec2::new(area_true(angle / f64::from(segments)), 1.0),
@@ -362,7 +389,7 @@ fn area_true_rings(
 
 impl Corner {
     /// The ring on this corner, its own corners at `at`.
-    fn ring(&self, segments: u32, at: DVec2) -> Station {
+    pub(crate) fn ring(&self, segments: u32, at: DVec2) -> Station {
         Station {
             radius: at.x,
             z: at.y,
@@ -375,142 +402,6 @@ impl Corner {
     }
 }
 
-fn pole(corner: &Corner) -> Station {
+pub(crate) fn pole(corner: &Corner) -> Station {
     corner.ring(0, DVec2::new(0.0, corner.at.y))
-}
-
-/// Which way a band faces: away from the axis, towards it, or along it.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-enum Facing {
-    Outward,
-    Inward,
-    Along,
-}
-
-fn facing(from: DVec2, to: DVec2) -> Facing {
-    // The outward normal of the travel (dr, dz) is (dz, -dr).
-    match (to.y - from.y).partial_cmp(&0.0) {
-        Some(std::cmp::Ordering::Greater) => Facing::Outward,
-        Some(std::cmp::Ordering::Less) => Facing::Inward,
-        _ => Facing::Along,
-    }
-}
-
-/// Rings of one count for the whole body. With corners at the radius r the polygon is inside the circle, at r / cos(t/2)
-/// outside; outward faces get the one, inward faces the other, so that the solid between them is on the same side
-/// everywhere. Where two such faces meet in a lip, the ring stands where the two displaced faces meet.
-fn one_sided_rings(
-    chains: &[Outline],
-    angle: f64,
-    options: &Options,
-    within: f64,
-) -> Result<BodyPlan, MeshError> {
-    let outer_grows = options.placement == Placement::Circumscribed;
-    let excess = |step: f64| 1.0 / trig::cos(0.5 * step) - 1.0;
-    let mut segments = chains
-        .iter()
-        .flat_map(|outline| &outline.corners)
-        .filter(|corner| corner.at.x > 0.0)
-        .map(|corner| count(corner.circle, angle, options, within - corner.spent, excess))
-        .max()
-        .unwrap_or(3);
-    loop {
-        let grown = 1.0 + excess(angle / f64::from(segments));
-        let factor = |facing: Facing| {
-            if (facing == Facing::Outward) == outer_grows {
-                grown
-            } else {
-                1.0
-            }
-        };
-        let mut deviation = 0.0_f64;
-        let loops: Vec<LoopPlan> = chains
-            .iter()
-            .map(|outline| {
-                let (stations, off) = one_sided_stations(&outline.corners, segments, grown, factor);
-                deviation = deviation.max(off);
-                LoopPlan {
-                    stations,
-                    meridional: outline.meridional.clone(),
-                }
-            })
-            .collect();
-        if deviation <= within {
-            let plan = BodyPlan { loops, deviation };
-            plan.allow(angle, options)?;
-            return Ok(plan);
-        }
-        let more = segments / 8 + 4;
-        segments = if angle == TAU {
-            segments + more / 4 * 4
-        } else {
-            segments + more
-        };
-        if u64::from(segments) > options.most_triangles {
-            return Err(MeshError::TooMany {
-                triangles: u64::from(segments),
-                allowed: options.most_triangles,
-            });
-        }
-    }
-}
-
-fn one_sided_stations(
-    corners: &[Corner],
-    segments: u32,
-    grown: f64,
-    factor: impl Fn(Facing) -> f64,
-) -> (Vec<Station>, f64) {
-    let count = corners.len();
-    let mut deviation = 0.0_f64;
-    let stations = (0..count)
-        .map(|i| {
-            let [before, corner, after] = [
-                &corners[(i + count - 1) % count],
-                &corners[i],
-                &corners[(i + 1) % count],
-            ];
-            if corner.at.x <= 0.0 {
-                return pole(corner);
-            }
-            let (arriving, leaving) = (facing(before.at, corner.at), facing(corner.at, after.at));
-            let is_lip = matches!(
-                (arriving, leaving),
-                (Facing::Outward, Facing::Inward) | (Facing::Inward, Facing::Outward)
-            );
-            let scaled = |p: DVec2, by: f64| DVec2::new(p.x * by, p.y);
-            let at = if is_lip {
-                let (f, g) = (factor(arriving), factor(leaving));
-                let (p, u) = (
-                    scaled(corner.at, f),
-                    scaled(corner.at, f) - scaled(before.at, f),
-                );
-                let (q, v) = (
-                    scaled(corner.at, g),
-                    scaled(after.at, g) - scaled(corner.at, g),
-                );
-                let turned = u.perp_dot(v);
-                if turned == 0.0 {
-                    p
-                } else {
-                    p + u * ((q - p).perp_dot(v) / turned)
-                }
-            } else {
-                let facing = if arriving == Facing::Along {
-                    leaving
-                } else {
-                    arriving
-                };
-                scaled(corner.at, factor(facing))
-            };
-            let off = if is_lip {
-                at.distance(corner.at) + (grown - 1.0) * corner.at.x
-            } else {
-                corner.circle.cost((grown - 1.0) * corner.at.x)
-            };
-            deviation = deviation.max(corner.spent + off);
-            corner.ring(segments, at)
-        })
-        .collect();
-    (stations, deviation)
 }

@@ -7,18 +7,23 @@ mod chords;
 mod expect;
 pub mod figures;
 
+mod kept;
+mod making;
 mod material;
 mod proof;
 pub mod record;
 #[cfg(test)]
 mod sample;
 mod study;
+mod weighed;
 mod weighing;
 
+pub use kept::Kept;
+pub use making::Made;
 pub use material::BodyMaterial;
-pub use proof::{Kept, Made, Weighed};
 pub use record::Record;
 pub use study::{Source, Study};
+pub use weighed::Weighed;
 
 /// Version of the program.
 pub const VERSION: &str = env!("CARGO_PKG_VERSION");

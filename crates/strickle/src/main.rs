@@ -5,6 +5,7 @@ mod command;
 mod failure;
 mod grid;
 mod input;
+mod progress;
 mod shelf;
 mod status;
 mod style;

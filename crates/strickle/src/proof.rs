@@ -3,91 +3,25 @@
 //! The mesh is measured as it was written and read back, not as it was meant. Each body is measured by itself, since bodies
 //! that touch share places; the part is their sum, weighed with their densities.
 
-use crate::Study;
-use crate::record::{Audit, Budget, Measured, Mesh, Predicted, Verdict};
-use glam::{DMat3, DVec3};
-use measure::{Figures, Triangles, Welded};
-use mesh::{MeshError, Moments, Options, Plan, Solid};
-
-/// Share of the largest extent that a mesh may be off where nothing is said: 1/2000.
-const DEFAULT_SHARE: f64 = 1.0 / 2000.0;
-
-/// A mesh of the part, in f64, with the rings it was made from.
-#[derive(Debug)]
-pub struct Made {
-    /// The rings.
-    pub plan: Plan,
-    /// The triangles, body after body.
-    pub mesh: mesh::Mesh,
-}
-
-/// How a mesh was kept: what rounds its coordinates.
-#[derive(Debug, Clone)]
-pub struct Kept {
-    /// The file it was written to.
-    pub file: Option<String>,
-    /// Metres a number of the file.
-    pub unit: f64,
-    /// The facets as read back, body after body, metres.
-    pub facets: Vec<[DVec3; 3]>,
-}
-
-/// One body or the whole part, measured or predicted: everything the comparison shows.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub struct Weighed {
-    /// Volume, m3.
-    pub volume: f64,
-    /// Mass, kg.
-    pub mass: f64,
-    /// Centre of mass, m.
-    pub centre: DVec3,
-    /// Moment of inertia matrix about the centre of mass, kg m2.
-    pub inertia: DMat3,
-}
+use crate::record::{Audit, Budget, EdgeBudget, Measured, Verdict};
+use crate::{Kept, Made, Study, Weighed};
+use glam::DVec3;
+use measure::{Figures, Triangles};
 
 impl Study {
-    /// The greatest distance between mesh and surface where nothing is said, metres.
-    pub fn default_within(&self) -> f64 {
-        let exact = self.exact();
-        DEFAULT_SHARE * exact.largest_diameter.max(exact.length)
-    }
-
-    /// Makes a mesh of the part.
-    ///
-    /// # Errors
-    /// See [`MeshError`].
-    pub fn mesh(&self, options: &Options) -> Result<Made, MeshError> {
-        let bodies = self.part.bodies.iter().zip(&self.exact().bodies);
-        let solids: Vec<Solid> = bodies
-            .map(|(body, exact)| Solid {
-                region: &body.region,
-                volume: exact.volume,
-            })
-            .collect();
-        let plan = Plan::new(&solids, self.part.revolve, options)?;
-        let mesh = plan.mesh()?;
-        Ok(Made { plan, mesh })
-    }
-
     /// Measures the mesh as it was kept, compares, and judges: fills in the record's mesh, measured, audit, budget and
     /// verdict. Gives what was predicted and what was measured.
     pub fn prove(&mut self, made: &Made, kept: &Kept) -> (Weighed, Option<Weighed>) {
-        let densities: Vec<f64> = self
-            .materials
-            .iter()
-            .map(|material| material.density)
-            .collect();
-        let predicted = together(made.plan.predicted().iter().map(of_moments).zip(&densities));
-        let bodies: Vec<Welded> = made
-            .mesh
-            .bodies
-            .iter()
-            .map(|body| measure::weld_equal(kept.facets.get(body.triangles.clone()).unwrap_or(&[])))
-            .collect();
+        let predicted = self.predicted(&made.plan);
+        let bodies = &kept.bodies;
         let audits: Vec<measure::Audit> = bodies
             .iter()
             .map(|body| measure::audit(body.triangles()))
             .collect();
+        let crossings: usize = bodies
+            .iter()
+            .map(|body| measure::crossings(body.triangles()).count)
+            .sum();
         let figures: Vec<Figures> = bodies
             .iter()
             .map(|body| measure::figures(body.triangles()))
@@ -97,7 +31,9 @@ impl Study {
             .map(|body| measure::parry(body.triangles()))
             .collect();
 
-        let mut reasons = soundness(&audits);
+        let mut reasons = kept.differences.clone();
+        let audit = summed(&audits, crossings);
+        reasons.extend(soundness(&audit));
         let measured = peers
             .iter()
             .copied()
@@ -107,12 +43,11 @@ impl Study {
                     reasons.extend(measure::compare(own, peer).iter().map(disagreement));
                 }
                 // Volume and centre are parry's; the matrix is our own, whose principal moments parry has confirmed.
-                together(
+                self.together(
                     peers
                         .iter()
                         .zip(&figures)
-                        .map(|(peer, own)| (peer.volume, peer.centre, own.inertia))
-                        .zip(&densities),
+                        .map(|(peer, own)| (peer.volume, peer.centre, own.inertia)),
                 )
             });
         let surface: f64 = figures.iter().map(|figures| figures.surface).sum();
@@ -136,7 +71,7 @@ impl Study {
                 .iter()
                 .flat_map(|verdict| verdict.reasons.clone()),
         );
-        self.record.mesh = Some(mesh_record(made, kept, &predicted));
+        self.note_mesh(made, kept.file.clone());
         self.record.measured = measured.as_ref().map(|measured| Measured {
             by: "parry3d-f64",
             volume: measured.volume,
@@ -145,7 +80,7 @@ impl Study {
             centre: measured.centre.to_array(),
             inertia_about_centre: measured.inertia.to_cols_array_2d(),
         });
-        self.record.audit = Some(summed(&audits));
+        self.record.audit = Some(audit);
         self.record.budget = budget;
         self.record.verdict = Some(Verdict {
             holds: reasons.is_empty(),
@@ -156,14 +91,14 @@ impl Study {
 
     /// Measured less exact volume, by cause.
     fn budget(&self, made: &Made, kept: &Kept, measured: f64) -> Budget {
-        let differences = || made.plan.differences().into_iter().flatten();
-        let circumferential: f64 = differences().map(|edge| edge.circumferential).sum();
-        let meridional: f64 = differences().map(|edge| edge.meridional).sum();
+        let edges = self.edge_budgets(made);
+        let circumferential: f64 = edges.iter().map(|edge| edge.circumferential).sum();
+        let meridional: f64 = edges.iter().map(|edge| edge.meridional).sum();
         let rounded: Vec<DVec3> = made
             .mesh
             .positions
             .iter()
-            .map(|p| files::rounded(*p, kept.unit))
+            .map(|p| files::rounded(*p, kept.unit.metres()))
             .collect();
         let volume_of = |positions: &[DVec3]| -> f64 {
             let bodies = made.mesh.bodies.iter();
@@ -188,7 +123,33 @@ impl Study {
             meridional,
             rounding,
             unexplained: difference - circumferential - meridional - rounding,
+            edges: edges
+                .into_iter()
+                .filter(|edge| edge.circumferential != 0.0 || edge.meridional != 0.0)
+                .collect(),
         }
+    }
+
+    /// What each edge contributes to mesh less exact volume.
+    fn edge_budgets(&self, made: &Made) -> Vec<EdgeBudget> {
+        let differences = made.plan.differences();
+        let bodies = self.part.bodies.iter().zip(&differences);
+        bodies
+            .flat_map(|(body, edges)| {
+                edges.iter().map(|edge| {
+                    let outline = body.region.loops().nth(edge.loop_index);
+                    let tag = outline.and_then(|outline| outline.tags().get(edge.edge_index));
+                    let origin = tag.and_then(|tag| body.steps.get(*tag as usize));
+                    EdgeBudget {
+                        body: body.name.clone(),
+                        edge: origin.map(|origin| origin.words.clone()),
+                        name: origin.and_then(|origin| origin.name.clone()),
+                        circumferential: edge.circumferential,
+                        meridional: edge.meridional,
+                    }
+                })
+            })
+            .collect()
     }
 
     /// What rounding may leave of a volume summed in f64 over `triangles`: each of the n additions rounds by half a unit of
@@ -201,59 +162,8 @@ impl Study {
     }
 }
 
-/// Volume, centre and inertia about it for unit density.
-fn of_moments(moments: &Moments) -> (f64, DVec3, DMat3) {
-    (
-        moments.volume,
-        moments.centre(),
-        moments.inertia_about_centre(),
-    )
-}
-
-/// Bodies with their densities, as one.
-fn together<'a>(bodies: impl Iterator<Item = ((f64, DVec3, DMat3), &'a f64)> + Clone) -> Weighed {
-    let mass: f64 = bodies
-        .clone()
-        .map(|((volume, ..), density)| volume * density)
-        .sum();
-    let centre = bodies
-        .clone()
-        .map(|((volume, centre, _), density)| centre * (volume * density))
-        .sum::<DVec3>()
-        / mass;
-    let inertia = bodies
-        .clone()
-        .fold(DMat3::ZERO, |sum, ((volume, own, inertia), density)| {
-            let d = own - centre;
-            let outer = DMat3::from_cols(d * d.x, d * d.y, d * d.z);
-            let shift = DMat3::from_diagonal(DVec3::splat(d.length_squared())) - outer;
-            sum + (inertia + shift * volume) * *density
-        });
-    Weighed {
-        volume: bodies.map(|((volume, ..), _)| volume).sum(),
-        mass,
-        centre,
-        inertia,
-    }
-}
-
-fn mesh_record(made: &Made, kept: &Kept, predicted: &Weighed) -> Mesh {
-    Mesh {
-        file: kept.file.clone(),
-        triangles: made.mesh.triangles.len(),
-        vertices: made.mesh.positions.len(),
-        within: made.plan.options().within,
-        placement: made.plan.options().placement.word(),
-        largest_deviation: made.plan.deviation(),
-        predicted: Predicted {
-            volume: predicted.volume,
-            centre: predicted.centre.to_array(),
-        },
-    }
-}
-
 /// The bodies' audits as one: counts add, answers must be yes for all.
-fn summed(audits: &[measure::Audit]) -> Audit {
+fn summed(audits: &[measure::Audit], crossings: usize) -> Audit {
     let count = |of: &dyn Fn(&measure::Audit) -> usize| audits.iter().map(of).sum();
     Audit {
         closed: audits.iter().all(measure::Audit::is_closed),
@@ -267,13 +177,12 @@ fn summed(audits: &[measure::Audit]) -> Audit {
         degenerate_triangles: count(&|audit| audit.degenerate_triangles),
         duplicate_triangles: count(&|audit| audit.duplicate_triangles),
         unreferenced_vertices: count(&|audit| audit.unreferenced_vertices),
-        self_intersections: None,
+        self_intersections: Some(crossings),
     }
 }
 
 /// What is not sound, in words.
-fn soundness(audits: &[measure::Audit]) -> Vec<String> {
-    let all = summed(audits);
+fn soundness(all: &Audit) -> Vec<String> {
     let mut reasons: Vec<String> = [
         (
             all.boundary_edges,
@@ -286,6 +195,10 @@ fn soundness(audits: &[measure::Audit]) -> Vec<String> {
         ),
         (all.degenerate_triangles, "triangles have no area"),
         (all.duplicate_triangles, "triangles stand twice"),
+        (
+            all.self_intersections.unwrap_or(0),
+            "pairs of triangles cut or touch each other where they should not",
+        ),
     ]
     .into_iter()
     .filter(|(count, _)| *count > 0)

@@ -269,6 +269,23 @@ pub struct Budget {
     pub rounding: f64,
     /// What no cause explains.
     pub unexplained: f64,
+    /// The first two by edge; edges that contribute nothing are left out.
+    pub edges: Vec<EdgeBudget>,
+}
+
+/// What an edge contributes to mesh less exact volume, m3.
+#[derive(Debug, Clone, PartialEq, Serialize)]
+pub struct EdgeBudget {
+    /// The body.
+    pub body: String,
+    /// Where the edge comes from: `outline, step 3`.
+    pub edge: Option<String>,
+    /// Its name, if it has one.
+    pub name: Option<String>,
+    /// Chords in place of circles about the axis.
+    pub circumferential: f64,
+    /// Chords in place of the curved edge.
+    pub meridional: f64,
 }
 
 /// The answer.

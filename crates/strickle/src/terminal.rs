@@ -8,7 +8,7 @@ use anstream::AutoStream;
 use miette::{GraphicalReportHandler, GraphicalTheme};
 use std::error::Error as _;
 use std::fmt::Write as _;
-use std::io::{self, StderrLock, StdoutLock, Write as _};
+use std::io::{self, IsTerminal as _, Stderr, StdoutLock, Write as _};
 
 /// Columns where the terminal does not tell, and the most that messages use.
 const COLUMNS: usize = 80;
@@ -16,7 +16,8 @@ const COLUMNS: usize = 80;
 /// The two streams, with the colours that they can show.
 pub(crate) struct Terminal {
     out: AutoStream<StdoutLock<'static>>,
-    err: AutoStream<StderrLock<'static>>,
+    /// Not locked: a sign of life is drawn from another thread.
+    err: AutoStream<Stderr>,
     quiet: bool,
 }
 
@@ -30,9 +31,14 @@ impl Terminal {
         };
         Self {
             out: AutoStream::new(io::stdout().lock(), choice),
-            err: AutoStream::new(io::stderr().lock(), choice),
+            err: AutoStream::new(io::stderr(), choice),
             quiet,
         }
+    }
+
+    /// True where a sign of life can be drawn and taken away again.
+    pub(crate) fn shows_progress(&self) -> bool {
+        !self.quiet && io::stderr().is_terminal()
     }
 
     /// Writes a result for people, unless they asked for quiet. Styles are stripped where they cannot be shown.

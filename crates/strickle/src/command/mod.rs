@@ -3,6 +3,8 @@
 mod completions;
 mod man;
 mod materials;
+mod mesh;
+mod meshing;
 mod new;
 mod prove;
 mod schema;
@@ -26,6 +28,7 @@ pub(crate) fn run(command: &Command, terminal: &mut Terminal) -> Result<Status, 
     match command {
         Command::New(arguments) => new::run(arguments, terminal),
         Command::Weigh(arguments) => weigh::run(arguments, terminal),
+        Command::Mesh(arguments) => mesh::run(arguments, terminal),
         Command::Prove(arguments) => prove::run(arguments, terminal),
         Command::Materials(arguments) => materials::run(arguments, terminal),
         Command::Schema => schema::run(terminal),

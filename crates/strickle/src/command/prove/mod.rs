@@ -2,27 +2,24 @@
 
 mod report;
 
+pub(in crate::command) use report::distances;
+
 use crate::arguments::Prove;
 use crate::command::each_part;
+use crate::command::meshing;
 use crate::failure::Failure;
+use crate::progress::Progress;
 use crate::status::Status;
 use crate::terminal::Terminal;
-use files::Header;
-use mesh::{MeshError, Options};
+use files::{Format, Unit, write_whole};
 use std::fs::{self, File};
 use std::io::{self, BufReader, Cursor, Write as _};
 use std::path::{Path, PathBuf};
-use strickle::figures::{Kind, Scale};
 use strickle::{Kept, Made, Study};
 
 /// Meshes each part, measures what was written and read back, and judges.
 pub(super) fn run(arguments: &Prove, terminal: &mut Terminal) -> Result<Status, Failure> {
-    if let Some(folder) = &arguments.folder {
-        fs::create_dir_all(folder).map_err(|source| Failure::Write {
-            file: folder.clone(),
-            source,
-        })?;
-    }
+    let unit = arguments.meshing.unit.unit();
     let mut first = true;
     let mut taken = Vec::new();
     each_part(
@@ -30,32 +27,35 @@ pub(super) fn run(arguments: &Prove, terminal: &mut Terminal) -> Result<Status, 
         &arguments.settings,
         terminal,
         |mut study, terminal| {
-            let options = Options::within(within(&study, arguments.within.as_deref())?);
-            let made = study
-                .mesh(&options)
-                .map_err(|error| refused(&study, &error))?;
             let target = arguments
                 .folder
                 .as_deref()
                 .map(|folder| Target::new(folder, &study, &mut taken))
                 .transpose()?;
-            let unit = arguments.unit.metres();
-            let header = Header {
-                name: &study.part.name,
-                unit: arguments.unit.word(),
+            let plan = meshing::plan(&study, &arguments.meshing)?;
+            let mut progress = Progress::of(plan.triangles(), terminal);
+            progress.stage("making the triangles");
+            let made = Made::of(plan).map_err(|error| meshing::refused(&study, &error))?;
+            // Not before: a part that cannot be meshed leaves no folder behind.
+            if let Some(folder) = &arguments.folder {
+                fs::create_dir_all(folder).map_err(|source| Failure::Write {
+                    file: folder.clone(),
+                    source,
+                })?;
+            }
+            progress.stage("writing and reading back");
+            let kept = match &target {
+                Some(target) => keep_in(target, &study, &made, unit)?,
+                None => keep_in_memory(&study, &made, unit)?,
             };
-            let stl = target.as_ref().map(|target| target.with("stl"));
-            let kept = keep(&made, &header, unit, stl)?;
+            progress.stage("measuring");
             let (predicted, measured) = study.prove(&made, &kept);
+            progress.end();
             let json = study.record.line();
             if let Some(target) = &target {
                 let file = target.with("json");
-                files::write_whole(&file, |writer| writer.write_all(json.as_bytes())).map_err(
-                    |source| Failure::Write {
-                        file: file.clone(),
-                        source,
-                    },
-                )?;
+                write_whole(&file, |writer| writer.write_all(json.as_bytes()))
+                    .map_err(|source| Failure::Write { file, source })?;
             }
             if arguments.output.json {
                 terminal.print(&json)?;
@@ -70,43 +70,6 @@ pub(super) fn run(arguments: &Prove, terminal: &mut Terminal) -> Result<Status, 
             Ok(Status::of(study.record.verdict.as_ref()))
         },
     )
-}
-
-/// The distance asked for, in metres, or the part's default.
-fn within(study: &Study, asked: Option<&str>) -> Result<f64, Failure> {
-    let Some(text) = asked else {
-        return Ok(study.default_within());
-    };
-    let hint = "for example: --within 0.05mm";
-    let length = part::length(text, study.part.unit).map_err(|fault| {
-        Failure::usage(format!("--within {text}: {}", fault.message))
-            .with_hint(fault.help.as_deref().unwrap_or(hint))
-    })?;
-    if length.is_finite() && length > 0.0 {
-        Ok(length)
-    } else {
-        Err(
-            Failure::usage(format!("--within {text}: the distance must be positive"))
-                .with_hint(hint),
-        )
-    }
-}
-
-/// Why there is no mesh, and what to do.
-fn refused(study: &Study, error: &MeshError) -> Failure {
-    let place = Scale::of(Kind::Length, study.exact().largest_diameter);
-    match *error {
-        MeshError::TooThin { r, z } => Failure::usage(format!(
-            "two faces come closer than a mesh can keep apart, near r {}, z {}",
-            place.text(r),
-            place.text(z)
-        ))
-        .with_hint("make the wall thicker there, or ask for a larger --within so that fewer triangles are needed elsewhere"),
-        MeshError::Within | MeshError::TooMany { .. } => {
-            Failure::usage(error.to_string()).with_hint("ask for a larger distance with --within")
-        }
-        _ => Failure::usage(error.to_string()),
-    }
 }
 
 /// Where a part's files go: the folder and the files' name without its ending.
@@ -147,36 +110,46 @@ impl Target {
     }
 }
 
-/// Writes the mesh to `file`, or to memory where there is none, and reads it back.
-fn keep(made: &Made, header: &Header, unit: f64, file: Option<PathBuf>) -> Result<Kept, Failure> {
-    let (positions, triangles) = (&made.mesh.positions, &made.mesh.triangles);
-    let facets = if let Some(file) = &file {
-        files::write_whole(file, |writer| {
-            files::write_stl(writer, header, unit, positions, triangles)
-        })
-        .map_err(|source| Failure::Write {
-            file: file.clone(),
-            source,
-        })?;
-        File::open(file)
-            .map_err(files::StlError::from)
-            .and_then(|opened| files::read_stl(&mut BufReader::new(opened), unit))
-            .map_err(|error| Failure::Read {
-                file: file.clone(),
-                source: io::Error::other(error),
-            })?
-    } else {
-        let mut bytes = Vec::new();
-        files::write_stl(&mut bytes, header, unit, positions, triangles)
-            .and_then(|()| files::read_stl(&mut Cursor::new(bytes), unit).map_err(io::Error::other))
-            .map_err(|source| Failure::Read {
-                file: PathBuf::from("(memory)"),
-                source,
-            })?
+/// Writes the mesh as STL and 3MF and reads both back.
+fn keep_in(target: &Target, study: &Study, made: &Made, unit: Unit) -> Result<Kept, Failure> {
+    let model = study.model(made, unit);
+    let [stl, package] =
+        [(Format::Stl, "stl"), (Format::ThreeMf, "3mf")].map(|(format, ending)| {
+            let file = target.with(ending);
+            format
+                .write_file(&model, &file)
+                .map_err(|source| Failure::Write {
+                    file: file.clone(),
+                    source,
+                })
+                .map(|()| file)
+        });
+    let (stl, package) = (stl?, package?);
+    let unreadable = |file: &Path, source: io::Error| Failure::Read {
+        file: file.to_owned(),
+        source,
     };
-    Ok(Kept {
-        file: file.map(|file| file.display().to_string()),
-        unit,
-        facets,
-    })
+    let open = |file: &Path| File::open(file).map_err(|source| unreadable(file, source));
+    let name = stl.display().to_string();
+    let mut kept = Kept::stl(&mut BufReader::new(open(&stl)?), made, unit, Some(name))
+        .map_err(|error| unreadable(&stl, io::Error::other(error)))?;
+    let read = files::read_three_mf(BufReader::new(open(&package)?))
+        .map_err(|error| unreadable(&package, io::Error::other(error)))?;
+    kept.compare(made, &read);
+    Ok(kept)
+}
+
+/// Writes the mesh as STL to memory and reads it back.
+fn keep_in_memory(study: &Study, made: &Made, unit: Unit) -> Result<Kept, Failure> {
+    let mut bytes = Cursor::new(Vec::new());
+    Format::Stl
+        .write(&study.model(made, unit), &mut bytes)
+        .and_then(|()| {
+            bytes.set_position(0);
+            Kept::stl(&mut bytes, made, unit, None).map_err(io::Error::other)
+        })
+        .map_err(|source| Failure::Read {
+            file: PathBuf::from("(memory)"),
+            source,
+        })
 }

@@ -4,7 +4,7 @@ use crate::command::weigh::{caution, expected, title};
 use crate::grid::{Cell, Grid};
 use crate::style::{BAD, GOOD, QUIET, STRONG};
 use strickle::figures::{Kind, Scale, plain};
-use strickle::record::Budget;
+use strickle::record::{Budget, Mesh};
 use strickle::{Kept, Study, Weighed};
 
 /// The page of a part that was proved.
@@ -40,15 +40,23 @@ fn mesh(study: &Study, kept: &Kept) -> String {
     let Some(mesh) = &study.record.mesh else {
         return String::new();
     };
-    let distance = Scale::of(Kind::Length, mesh.within);
     let file = kept.file.as_deref().map_or_else(
         || "not written; give -o FOLDER to keep it".to_owned(),
         |file| format!("written to {}", plain(file)),
     );
     format!(
-        "mesh       {} triangles, {}, {file}\ndistance   {} from the true surface at most, {} asked for\n",
+        "mesh       {} triangles, {}, {file}\n{}",
         mesh.triangles,
         mesh.placement,
+        distances(mesh),
+    )
+}
+
+/// How near the surface a mesh is.
+pub(in crate::command) fn distances(mesh: &Mesh) -> String {
+    let distance = Scale::of(Kind::Length, mesh.within);
+    format!(
+        "distance   {} from the true surface at most, {} asked for\n",
         distance.text(mesh.largest_deviation),
         distance.text(mesh.within),
     )

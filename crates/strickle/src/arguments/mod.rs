@@ -2,6 +2,10 @@
 //!
 //! Help, man page and completions are made from it.
 
+mod meshing;
+
+pub(crate) use meshing::Meshing;
+
 use clap::{Args, Parser, Subcommand, ValueEnum};
 use clap_complete::Shell;
 use part::Setting;
@@ -93,6 +97,11 @@ pub(crate) enum Command {
     ///
     /// The figures are closed forms by the two theorems of Pappus and Guldin; what the part file expects is judged.
     Weigh(Weigh),
+    /// Revolve a part into a triangle mesh and write it
+    ///
+    /// STL, OBJ or 3MF, by the file's ending. The mesh lies within a stated distance of the true surface, both ways. To have it
+    /// measured and every difference explained, use `prove`.
+    Mesh(Mesh),
     /// Prove that a part's mesh is that part
     ///
     /// The main job: the exact figures, what the mesh should weigh by its rings, and what is measured on the mesh that was
@@ -139,27 +148,23 @@ pub(crate) struct Weigh {
     pub(crate) output: Output,
 }
 
-/// Arguments of `prove`.
+/// Arguments of `mesh`.
 #[derive(Debug, Args)]
-pub(crate) struct Prove {
+pub(crate) struct Mesh {
+    /// The part file; `-` reads standard input
+    #[arg(value_name = "PART")]
+    pub(crate) part: PathBuf,
+
+    /// The file to write: .stl, .obj or .3mf
+    #[arg(short = 'o', long = "out", value_name = "FILE")]
+    pub(crate) file: PathBuf,
+
+    /// Write the STL as text; the numbers are the same
+    #[arg(long)]
+    pub(crate) text: bool,
+
     #[command(flatten)]
-    pub(crate) parts: Parts,
-
-    /// Folder for the mesh (STL) and the figures (JSON); made where it is not there
-    ///
-    /// The files are named after the part file. Without it nothing is written and the mesh is proved in memory.
-    #[arg(short = 'o', long = "out", value_name = "FOLDER")]
-    pub(crate) folder: Option<PathBuf>,
-
-    /// Largest distance between mesh and true surface; 1/2000 of the largest extent unless said
-    ///
-    /// A bare number is in the part's unit: `--within 0.05mm`, `--within "1/64 in"`.
-    #[arg(long, value_name = "LENGTH")]
-    pub(crate) within: Option<String>,
-
-    /// Unit of the mesh file, which has none of its own; its header says it
-    #[arg(long, value_name = "UNIT", value_enum, default_value_t)]
-    pub(crate) unit: MeshUnit,
+    pub(crate) meshing: Meshing,
 
     #[command(flatten)]
     pub(crate) settings: Settings,
@@ -168,44 +173,26 @@ pub(crate) struct Prove {
     pub(crate) output: Output,
 }
 
-/// Units of a mesh file.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Default, ValueEnum)]
-pub(crate) enum MeshUnit {
-    /// Millimetre
-    #[default]
-    Mm,
-    /// Centimetre
-    Cm,
-    /// Metre
-    M,
-    /// Inch
-    In,
-    /// Foot
-    Ft,
-}
+/// Arguments of `prove`.
+#[derive(Debug, Args)]
+pub(crate) struct Prove {
+    #[command(flatten)]
+    pub(crate) parts: Parts,
 
-impl MeshUnit {
-    /// The unit in metres.
-    pub(crate) fn metres(self) -> f64 {
-        match self {
-            Self::Mm => 1e-3,
-            Self::Cm => 1e-2,
-            Self::M => 1.0,
-            Self::In => 0.0254,
-            Self::Ft => 0.3048,
-        }
-    }
+    /// Folder for the mesh (STL and 3MF) and the figures (JSON); made where it is not there
+    ///
+    /// The files are named after the part file. Without it nothing is written and the mesh is proved in memory.
+    #[arg(short = 'o', long = "out", value_name = "FOLDER")]
+    pub(crate) folder: Option<PathBuf>,
 
-    /// Its word, as it is typed.
-    pub(crate) fn word(self) -> &'static str {
-        match self {
-            Self::Mm => "mm",
-            Self::Cm => "cm",
-            Self::M => "m",
-            Self::In => "in",
-            Self::Ft => "ft",
-        }
-    }
+    #[command(flatten)]
+    pub(crate) meshing: Meshing,
+
+    #[command(flatten)]
+    pub(crate) settings: Settings,
+
+    #[command(flatten)]
+    pub(crate) output: Output,
 }
 
 /// The parts to work on.

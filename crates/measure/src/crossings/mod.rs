@@ -22,8 +22,8 @@ pub struct Crossings {
 
 /// Pairs that are named.
 const NAMED: usize = 16;
-/// Triangles looked at in one go.
-const RUN: usize = 4096;
+/// Leaves of the tree looked at in one go.
+const RUN: usize = 512;
 
 /// Counts the pairs of triangles that have a point in common besides the corners or the edge that they share.
 ///
@@ -34,24 +34,13 @@ const RUN: usize = 4096;
 /// The result is the same for any number of threads. Indices must be in range.
 pub fn crossings(mesh: Triangles) -> Crossings {
     let tree = Tree::new(mesh);
-    let order = tree.order();
-    let runs: Vec<Crossings> = order
-        .par_chunks(RUN)
-        .enumerate()
-        .map(|(run, members)| {
+    let leaves = tree.leaves();
+    let runs: Vec<Crossings> = (0..leaves.div_ceil(RUN))
+        .into_par_iter()
+        .map(|run| {
             let mut found = Crossings::default();
-            for (place, &own) in (run * RUN..).zip(members) {
-                let Some(corners) = Corners::of(mesh, own) else {
-                    continue;
-                };
-                tree.near(corners.bounds(), place + 1, |other| {
-                    if Corners::of(mesh, other).is_some_and(|other| meet(&corners, &other)) {
-                        found.count += 1;
-                        if found.some.len() < NAMED {
-                            found.some.push([own.min(other), own.max(other)]);
-                        }
-                    }
-                });
+            for leaf in run * RUN..leaves.min((run + 1) * RUN) {
+                tree.near(leaf, |other| within(mesh, &tree, [leaf, other], &mut found));
             }
             found
         })
@@ -63,4 +52,30 @@ pub fn crossings(mesh: Triangles) -> Crossings {
         all.some.extend(run.some.into_iter().take(room));
     }
     all
+}
+
+/// The pairs of a leaf's triangles with another's, or among themselves.
+fn within(mesh: Triangles, tree: &Tree, [leaf, other]: [usize; 2], found: &mut Crossings) {
+    let at = |index: u32| mesh.corners(mesh.triangles[index as usize]);
+    for (place, (own, bounds)) in tree.members(leaf).enumerate() {
+        let behind = if leaf == other { place + 1 } else { 0 };
+        let mut corners = None;
+        for (index, _) in tree
+            .members(other)
+            .skip(behind)
+            .filter(|(_, box_of)| box_of.meets(bounds))
+        {
+            let Some(corners) = corners.get_or_insert_with(|| Corners::of(at(own))) else {
+                break;
+            };
+            let near = at(index);
+            if corners.may_meet(near) && Corners::of(near).is_some_and(|near| meet(corners, &near))
+            {
+                found.count += 1;
+                if found.some.len() < NAMED {
+                    found.some.push([own.min(index), own.max(index)]);
+                }
+            }
+        }
+    }
 }

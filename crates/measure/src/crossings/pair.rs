@@ -4,39 +4,57 @@
 //! across from it: what the triangles have in common reaches from the corner to one of them. With two shared the triangles
 //! lie in one plane, on the same side of their edge, or have nothing else in common.
 
-use super::tree::Bounds;
-use crate::Triangles;
 use glam::DVec3;
 use robust::{Coord, Coord3D};
 use std::cmp::Ordering;
 
 /// A triangle that has an area.
 #[derive(Debug, Clone, Copy)]
-pub(super) struct Corners([DVec3; 3]);
+pub(super) struct Corners {
+    at: [DVec3; 3],
+    /// Twice its area along the normal, and the rounding of its product with a vector of length one.
+    normal: DVec3,
+    rounding: f64,
+}
 
 impl Corners {
     /// None for a triangle without area or with a coordinate that is not finite.
-    pub(super) fn of(mesh: Triangles, index: u32) -> Option<Self> {
-        let corners = mesh.corners(mesh.triangles[index as usize]);
-        let [a, b, c] = corners;
-        if !corners.iter().all(|p| p.is_finite()) {
+    pub(super) fn of(at: [DVec3; 3]) -> Option<Self> {
+        let [a, b, c] = at;
+        if !at.iter().all(|p| p.is_finite()) {
             return None;
         }
+        let (u, v) = (b - a, c - a);
+        let normal = u.cross(v);
+        // Each of the product's terms is rounded some five times, by half a unit each.
+        let rounding = 16.0 * f64::EPSILON * (u.length_squared() * v.length_squared()).sqrt();
         // Where f64 finds an area far above its rounding there is one; else the exact signs are asked.
-        let normal = (b - a).cross(c - a);
-        let size = (b - a).length_squared().max((c - a).length_squared());
-        let has_area = normal.length() > 1e-9 * size || Plane::of(corners).is_some();
-        has_area.then_some(Self(corners))
+        let has_area = normal.length() > 2.0 * rounding || Plane::of(at).is_some();
+        has_area.then_some(Self {
+            at,
+            normal,
+            rounding,
+        })
     }
 
-    pub(super) fn bounds(&self) -> Bounds {
-        Bounds::of(self.0)
+    /// False where the other triangle is seen at a glance to have nothing in common with this one but corners: its other
+    /// corners lie on one side of this one's plane, by more than rounding.
+    pub(super) fn may_meet(&self, other: [DVec3; 3]) -> bool {
+        let (mut above, mut below) = (true, true);
+        for corner in other.into_iter().filter(|corner| !self.at.contains(corner)) {
+            let way = corner - self.at[0];
+            let height = self.normal.dot(way);
+            let rounding = self.rounding * way.length();
+            above &= height > rounding;
+            below &= height < -rounding;
+        }
+        !(above || below)
     }
 }
 
 /// Whether two triangles meet besides their shared corners.
 pub(super) fn meet(first: &Corners, second: &Corners) -> bool {
-    let (p, q) = (first.0, second.0);
+    let (p, q) = (first.at, second.at);
     let shared = p.map(|corner| q.iter().position(|other| *other == corner));
     let own = |is_shared: bool| (0..3).filter(move |i| shared[*i].is_some() == is_shared);
     match own(true).count() {

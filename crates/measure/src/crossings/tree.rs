@@ -1,5 +1,5 @@
-//! A flat tree of boxes over triangles in the order of a space-filling curve (Morton 1966): four bytes a triangle and one box
-//! for eight of them.
+//! A flat tree of boxes over triangles in the order of a space-filling curve (Morton 1966): a number and a box of f32 a triangle,
+//! and few boxes more.
 
 use crate::Triangles;
 use glam::{DVec3, Vec3};
@@ -39,7 +39,7 @@ impl Bounds {
         }
     }
 
-    fn meets(&self, other: &Self) -> bool {
+    pub(super) fn meets(&self, other: &Self) -> bool {
         self.low.cmple(other.high).all() && other.low.cmple(self.high).all()
     }
 }
@@ -48,6 +48,8 @@ impl Bounds {
 #[derive(Debug)]
 pub(super) struct Tree {
     order: Vec<u32>,
+    /// Of each triangle, in that order.
+    boxes: Vec<Bounds>,
     levels: Vec<Vec<Bounds>>,
 }
 
@@ -55,23 +57,24 @@ impl Tree {
     pub(super) fn new(mesh: Triangles) -> Self {
         let (low, high) = mesh.bounds().unwrap_or((DVec3::ZERO, DVec3::ONE));
         let scale = (high - low).map(|extent| if extent > 0.0 { CELLS / extent } else { 0.0 });
-        let mut keyed: Vec<(u64, u32)> = (0_u32..)
-            .zip(mesh.triangles)
-            .map(|(index, triangle)| {
-                let [a, b, c] = mesh.corners(*triangle);
+        let count = u32::try_from(mesh.triangles.len()).unwrap_or(u32::MAX);
+        let mut keyed: Vec<(u64, u32)> = (0..count)
+            .into_par_iter()
+            .map(|index| {
+                let [a, b, c] = mesh.corners(mesh.triangles[index as usize]);
                 (morton((((a + b + c) / 3.0) - low) * scale), index)
             })
             .collect();
         keyed.par_sort_unstable();
         let order: Vec<u32> = keyed.iter().map(|(_, index)| *index).collect();
         drop(keyed);
-        let leaves: Vec<Bounds> = order
+        let boxes: Vec<Bounds> = order
+            .par_iter()
+            .map(|index| Bounds::of(mesh.corners(mesh.triangles[*index as usize])))
+            .collect();
+        let leaves: Vec<Bounds> = boxes
             .par_chunks(LEAF)
-            .map(|leaf| {
-                leaf.iter()
-                    .map(|index| Bounds::of(mesh.corners(mesh.triangles[*index as usize])))
-                    .fold(Bounds::NOTHING, Bounds::union)
-            })
+            .map(|leaf| leaf.iter().copied().fold(Bounds::NOTHING, Bounds::union))
             .collect();
         let mut levels = vec![leaves];
         while let Some(below) = levels.last().filter(|level| level.len() > 1) {
@@ -81,16 +84,35 @@ impl Tree {
                 .collect();
             levels.push(above);
         }
-        Self { order, levels }
+        Self {
+            order,
+            boxes,
+            levels,
+        }
     }
 
-    /// The triangles in the tree's order.
-    pub(super) fn order(&self) -> &[u32] {
-        &self.order
+    /// Number of leaves.
+    pub(super) fn leaves(&self) -> usize {
+        self.order.len().div_ceil(LEAF)
     }
 
-    /// Calls `each` with the triangles at the place `from` of the order and behind whose leaf's box meets `bounds`.
-    pub(super) fn near(&self, bounds: Bounds, from: usize, mut each: impl FnMut(u32)) {
+    /// A leaf's triangles with their boxes.
+    pub(super) fn members(&self, leaf: usize) -> impl Iterator<Item = (u32, &Bounds)> + Clone {
+        let places = leaf * LEAF..self.order.len().min((leaf + 1) * LEAF);
+        let boxes = self.boxes.get(places.clone()).unwrap_or(&[]);
+        self.order
+            .get(places)
+            .unwrap_or(&[])
+            .iter()
+            .copied()
+            .zip(boxes)
+    }
+
+    /// Calls `each` with the leaves from `leaf` on whose boxes meet its box, itself first or among them.
+    pub(super) fn near(&self, leaf: usize, mut each: impl FnMut(usize)) {
+        let Some(bounds) = self.levels[0].get(leaf) else {
+            return;
+        };
         // A level halves the boxes below it, so that one waits a level.
         let mut waiting = [(0_usize, 0_usize); 64];
         let mut count = 1;
@@ -98,24 +120,19 @@ impl Tree {
         while count > 0 {
             count -= 1;
             let (level, node) = waiting[count];
-            let end = (node + 1) << level;
             let Some(own) = self.levels[level].get(node) else {
                 continue;
             };
-            if end * LEAF <= from || !own.meets(&bounds) {
+            if (node + 1) << level <= leaf || !own.meets(bounds) {
                 continue;
             }
             if level > 0 {
                 waiting[count] = (level - 1, 2 * node + 1);
                 waiting[count + 1] = (level - 1, 2 * node);
                 count += 2;
-                continue;
+            } else {
+                each(node);
             }
-            let last = self.order.len().min(end * LEAF);
-            self.order[from.max(node * LEAF)..last]
-                .iter()
-                .copied()
-                .for_each(&mut each);
         }
     }
 }

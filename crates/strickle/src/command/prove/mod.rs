@@ -141,7 +141,9 @@ fn keep_in(target: &Target, study: &Study, made: &Made, unit: Unit) -> Result<Ke
 
 /// Writes the mesh as STL to memory and reads it back.
 fn keep_in_memory(study: &Study, made: &Made, unit: Unit) -> Result<Kept, Failure> {
-    let mut bytes = Cursor::new(Vec::new());
+    // Header, count and 50 bytes a facet: a vector that grows would take twice as much.
+    let size = 84 + 50 * made.mesh.triangles.len();
+    let mut bytes = Cursor::new(Vec::with_capacity(size));
     Format::Stl
         .write(&study.model(made, unit), &mut bytes)
         .and_then(|()| {

@@ -189,7 +189,10 @@ mod oracle {
 
     fn range(piece: &[V], axis: V) -> (i128, i128) {
         let along = || piece.iter().map(|p| dot(*p, axis));
-        (along().min().unwrap(), along().max().unwrap())
+        (
+            along().min().expect("a piece has corners"),
+            along().max().expect("a piece has corners"),
+        )
     }
 
     fn disjoint(a: &[V], b: &[V]) -> bool {

@@ -88,10 +88,10 @@ impl<W: Write> Write for Headed<'_, W> {
 ///
 /// # Errors
 /// See [`StlError`].
-pub fn stl_facets<'a, R: Read + Seek>(
-    reader: &'a mut R,
+pub fn stl_facets<R: Read + Seek>(
+    reader: &mut R,
     unit: f64,
-) -> Result<impl Iterator<Item = Result<[DVec3; 3], StlError>> + use<'a, R>, StlError> {
+) -> Result<impl Iterator<Item = Result<[DVec3; 3], StlError>> + use<'_, R>, StlError> {
     let facets = stl_io::create_stl_reader(reader)?.enumerate();
     Ok(facets.map(move |(index, facet)| {
         let corners = facet?

@@ -130,7 +130,7 @@ impl Attributes {
         let text = self
             .get(name)
             .ok_or_else(|| wrong(format!("a {what} has no {name}")))?;
-        text.trim().parse().map_err(|_| {
+        text.trim().parse().ok().ok_or_else(|| {
             wrong(format!(
                 "{name}=\"{text}\" of a {what} is no number that fits"
             ))
@@ -190,7 +190,7 @@ impl Document {
                 }
                 Event::GeneralRef(entity) if self.in_title => {
                     let title = self.title.get_or_insert_default();
-                    match entity.resolve_char_ref().map_err(quick_xml::Error::from)? {
+                    match entity.resolve_char_ref()? {
                         Some(character) => title.push(character),
                         None => title.push_str(resolve_predefined_entity(&entity).unwrap_or("")),
                     }
@@ -378,9 +378,9 @@ impl Document {
         let mut triangles = written.triangles.clone();
         if transform.mirrors() {
             // A mirror turns the triangles' sense round, and with it what is inside.
-            triangles
-                .iter_mut()
-                .for_each(|[_, b, c]| std::mem::swap(b, c));
+            for [_, b, c] in &mut triangles {
+                std::mem::swap(b, c);
+            }
         }
         let material = written
             .material
@@ -422,7 +422,7 @@ fn numbers<T: std::str::FromStr + Copy + Default>(
         let key = attribute.key.local_name();
         if let Some(place) = names.iter().position(|name| *name == key.as_ref()) {
             let text: &str = &attribute.value;
-            let number = text.trim().parse().map_err(|_| {
+            let number = text.trim().parse().ok().ok_or_else(|| {
                 wrong(format!(
                     "{}=\"{text}\" of a {what} is no number that fits",
                     names[place]

@@ -243,15 +243,15 @@ CLASSES = [
     ("1 km from the axis", 4, far_from_axis, any_turn, 1e-12),
     ("needle of two arcs", 6, needle, any_turn, 1e-12),
     ("crescent of two arcs", 6, crescent, any_turn, 1e-12),
-    ("ring of two half circles", 2, ring, any_turn, 1e-12),
+    ("ring of two half circles", 2, ring, any_turn, 1e-13),
     ("hollow ball", 5, hollow_ball, any_turn, 1e-12),
     ("saw of 120 teeth", 1, saw, any_turn, 1e-12),
-    ("ordinary, narrow turn", 4, ordinary, narrow_turn, 1e-12),
-    ("on the axis, narrow turn", 3, solid, narrow_turn, 1e-12),
+    ("ordinary, narrow turn", 4, ordinary, narrow_turn, 1e-13),
+    ("on the axis, narrow turn", 3, solid, narrow_turn, 1e-13),
 ]
 
-# A sample is taken from the other classes, so that two parts take seconds and `tests/run` stays under half a minute here:
-# an ellipse as flat as that is halved many times, and the others have many edges.
+# A sample is taken from the other classes, so that two parts take seconds and `tests/run` stays under half a minute
+# here: an ellipse as flat as that is halved many times, and the others have many edges.
 SLOW = {"flat ellipse", "saw of 120 teeth", "ordinary, narrow turn", "1 km along the axis", "1 km from the axis"}
 
 

@@ -86,8 +86,8 @@ def beside(base, distance):
         (r, z), (dr, dz) = base(t)
         speed = mp.sqrt(dr * dr + dz * dz)
         if speed == 0:
-            # The curve stalls at this end; a step inwards it has the direction of the limit, to 30 digits. No rate: it is
-            # only a chord that asks for an end.
+            # The curve stalls at this end; a step inwards it has the direction of the limit, to 30 digits. No rate:
+            # it is only a chord that asks for an end.
             step = mpf(10) ** -30
             _, (dr, dz) = base(step if t == 0 else 1 - step)
             speed = mp.sqrt(dr * dr + dz * dz)

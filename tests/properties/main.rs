@@ -3,6 +3,7 @@
 //! Cases come from a fixed seed, so that a run says the same twice; `PROPTEST_RNG_SEED` and `PROPTEST_CASES` choose
 //! others.
 
+mod meshes;
 mod turned;
 
 use checks::{exact, one_body};

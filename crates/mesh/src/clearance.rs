@@ -1,31 +1,35 @@
 //! Thin walls: do the bands of a body keep clear of each other?
 //!
-//! Every band lies within its deviation of its frustum; two bands that are no neighbours must be further apart, in the
-//! section, than what both may deviate. Neighbours share a ring and cannot cross near it.
+//! A ring is a plane polygon: its corners have one radius and its segments' middles another, at one station. Between two rings
+//! a band keeps, in the section, to the hull of these four places ([`crate::ring`]). The hulls of two bands that are no
+//! neighbours must not meet. Neighbours share a ring and cannot cross near it.
 
-use crate::plan::BodyPlan;
-use profile::DVec2;
+use crate::plan::{BodyPlan, Station};
+use profile::{DVec2, left_of, trig};
 use rstar::{AABB, RTree, RTreeObject};
 
-/// A band in the section: a straight piece from station to station of the true circles.
+/// A band in the section: the places of its two rings' corners and middles.
 struct Piece {
     loop_index: usize,
     index: usize,
     count: usize,
-    from: DVec2,
-    to: DVec2,
+    places: [DVec2; 4],
 }
 
 impl RTreeObject for Piece {
     type Envelope = AABB<[f64; 2]>;
 
     fn envelope(&self) -> Self::Envelope {
-        AABB::from_corners(self.from.to_array(), self.to.to_array())
+        let [a, b, c, d] = self.places;
+        AABB::from_corners(
+            a.min(b).min(c).min(d).to_array(),
+            a.max(b).max(c).max(d).to_array(),
+        )
     }
 }
 
 /// A place where two bands come too close; `None` where the plan is clear.
-pub(crate) fn first_conflict(plan: &BodyPlan) -> Option<DVec2> {
+pub(crate) fn first_conflict(plan: &BodyPlan, angle: f64) -> Option<DVec2> {
     let pieces: Vec<Piece> = plan
         .loops
         .iter()
@@ -38,23 +42,33 @@ pub(crate) fn first_conflict(plan: &BodyPlan) -> Option<DVec2> {
                     loop_index,
                     index,
                     count,
-                    from: a.node,
-                    to: b.node,
+                    places: places(&a, &b, angle),
                 })
             })
         })
         .collect();
     let tree = RTree::bulk_load(pieces);
-    let clear = 2.0 * plan.deviation;
     tree.iter().find_map(|piece| {
-        let low = piece.from.min(piece.to) - clear;
-        let high = piece.from.max(piece.to) + clear;
-        tree.locate_in_envelope_intersecting(AABB::from_corners(low.to_array(), high.to_array()))
+        tree.locate_in_envelope_intersecting(piece.envelope())
             .filter(|other| (other.loop_index, other.index) > (piece.loop_index, piece.index))
             .filter(|other| !neighbours(piece, other))
-            .find(|other| distance(piece, other) <= clear)
-            .map(|_| piece.from)
+            .find(|other| meet(&piece.places, &other.places))
+            .map(|_| piece.places[0])
     })
+}
+
+/// Corners and segments' middles of two rings, r and z.
+fn places(a: &Station, b: &Station, angle: f64) -> [DVec2; 4] {
+    let of_ring = |ring: &Station| {
+        let middle = if ring.is_pole() {
+            0.0
+        } else {
+            ring.radius * trig::cos(0.5 * angle / f64::from(ring.segments))
+        };
+        [ring.radius, middle].map(|radius| DVec2::new(radius, ring.z))
+    };
+    let ([p, q], [r, s]) = (of_ring(a), of_ring(b));
+    [p, q, r, s]
 }
 
 fn neighbours(a: &Piece, b: &Piece) -> bool {
@@ -62,20 +76,27 @@ fn neighbours(a: &Piece, b: &Piece) -> bool {
         && ((a.index + 1) % a.count == b.index || (b.index + 1) % b.count == a.index)
 }
 
-/// Distance of two straight pieces; 0 where they cross.
-fn distance(a: &Piece, b: &Piece) -> f64 {
-    let side = |p: DVec2, q: DVec2, x: DVec2| (q - p).perp_dot(x - p);
-    let apart = |p: &Piece, q: &Piece| side(p.from, p.to, q.from) * side(p.from, p.to, q.to) > 0.0;
-    if !apart(a, b) && !apart(b, a) {
-        return 0.0;
-    }
-    let to_piece = |x: DVec2, p: &Piece| {
-        let along = p.to - p.from;
-        let t = ((x - p.from).dot(along) / along.length_squared()).clamp(0.0, 1.0);
-        x.distance(p.from + t * along)
+/// Whether the hulls of two sets of places meet: along no axis does the one end before the other begins.
+fn meet(first: &[DVec2; 4], second: &[DVec2; 4]) -> bool {
+    let ways = |places: &[DVec2; 4]| {
+        let [a, b, c, d] = *places;
+        [b - a, c - a, d - a, c - b, d - b, d - c]
     };
-    to_piece(a.from, b)
-        .min(to_piece(a.to, b))
-        .min(to_piece(b.from, a))
-        .min(to_piece(b.to, a))
+    let range = |places: &[DVec2; 4], axis: DVec2| {
+        let along = places.map(|place| place.dot(axis));
+        along
+            .into_iter()
+            .fold((f64::INFINITY, f64::NEG_INFINITY), |(low, high), x| {
+                (low.min(x), high.max(x))
+            })
+    };
+    !ways(first)
+        .into_iter()
+        .chain(ways(second))
+        // A piece without breadth ends along itself too.
+        .flat_map(|way| [left_of(way), way])
+        .any(|axis| {
+            let (p, q) = (range(first, axis), range(second, axis));
+            p.1 < q.0 || q.1 < p.0
+        })
 }

@@ -92,7 +92,8 @@ pub enum MeshError {
         /// The ratio asked for.
         asked: f64,
     },
-    /// Walls come so close to each other that no mesh of allowed size keeps them apart.
+    /// Walls come so close to each other that no mesh of allowed size keeps them apart. So it is, for a one-sided placement,
+    /// where two edges leave a corner in the same direction: the faces would lie on each other.
     #[error(
         "two faces of the section come closer than a mesh can keep apart, near r {r} m, z {z} m"
     )]

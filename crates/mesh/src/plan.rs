@@ -1,6 +1,6 @@
 //! A body as rings: which circles the mesh stands on and how many segments each has, before a triangle is made.
 
-use crate::meridian::{Division, Node, divide};
+use crate::meridian::{Chain, Division, Node, divide};
 use crate::one_sided::one_sided_rings;
 use crate::ring::{Circle, area_true, segments};
 use crate::{MeshError, Options, Placement};
@@ -135,21 +135,29 @@ pub(crate) fn body(
     }
     // The part's own extent is bound enough: beyond it the plainest mesh is made.
     let mut within = options.within.min(extent);
+    let mut conflict = None;
     loop {
-        let plan = body_within(region, [angle, volume, extent], options, within)?;
-        match crate::clearance::first_conflict(&plan) {
-            None => return Ok(plan),
-            // Finer until every face keeps clear of the others.
-            Some(_) if within > options.within * LEAST_SHARE && within > LEAST_WITHIN * extent => {
-                within *= 0.5;
-            }
-            Some(place) => {
-                return Err(MeshError::TooThin {
-                    r: place.x,
-                    z: place.y,
-                });
-            }
+        let plan = match (
+            body_within(region, [angle, volume, extent], options, within),
+            conflict,
+        ) {
+            // Not so many triangles for the distance asked for, but to keep faces apart.
+            (Err(MeshError::TooMany { .. }), Some(conflict)) => return Err(conflict),
+            (plan, _) => plan?,
+        };
+        let Some(place) = crate::clearance::first_conflict(&plan, angle) else {
+            return Ok(plan);
+        };
+        let too_thin = MeshError::TooThin {
+            r: place.x,
+            z: place.y,
+        };
+        // Finer until every face keeps clear of the others.
+        if within <= options.within * LEAST_SHARE || within <= LEAST_WITHIN * extent {
+            return Err(too_thin);
         }
+        conflict = Some(too_thin);
+        within *= 0.5;
     }
 }
 
@@ -245,6 +253,9 @@ fn corners(
     };
     for (i, edge) in edges.iter().enumerate() {
         let before = if i == 0 { edges.len() - 1 } else { i - 1 };
+        let last_facing = chains[before]
+            .as_ref()
+            .and_then(|chain| facings(chain, &edges[before]).last().copied());
         let spent_before = chains[before].as_ref().map_or(0.0, |chain| chain.deviation);
         let number = u32::try_from(i).unwrap_or(u32::MAX);
         let Some(chain) = &chains[i] else {
@@ -258,6 +269,7 @@ fn corners(
             found.meridional.push(0.0);
             continue;
         };
+        let facings = facings(chain, edge);
         for (j, node) in chain.nodes.iter().enumerate() {
             let (circle, spent) = if j == 0 {
                 let arriving = -profile::left_of(edges[before].tangent(1.0));
@@ -268,6 +280,17 @@ fn corners(
             } else {
                 (circle_at(node, None, 0.0), chain.deviation)
             };
+            // Between a node and the next the surface may face the axis more than at either.
+            let before = if j > 0 {
+                facings.get(j - 1)
+            } else {
+                last_facing.as_ref()
+            };
+            let facing = [before, facings.get(j)]
+                .into_iter()
+                .flatten()
+                .fold(circle.facing, |most, facing| most.max(*facing));
+            let circle = Circle { facing, ..circle };
             found.corners.push(Corner {
                 at: node.at,
                 circle,
@@ -279,6 +302,22 @@ fn corners(
         found.meridional.push(chain.moment_excess);
     }
     Ok(found)
+}
+
+/// Of each chord of a chain, the most that the surface along it faces the axis or away from it, |n_r|.
+fn facings(chain: &Chain, edge: &Edge) -> Vec<f64> {
+    let end = -profile::left_of(edge.tangent(1.0));
+    let normals = || chain.nodes.iter().map(|node| node.normal);
+    normals()
+        .zip(normals().skip(1).chain([end]))
+        .map(|(from, to)| {
+            if from.y * to.y < 0.0 {
+                1.0
+            } else {
+                from.x.abs().max(to.x.abs())
+            }
+        })
+        .collect()
 }
 
 /// A point on the axis.

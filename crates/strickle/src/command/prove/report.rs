@@ -42,7 +42,7 @@ fn mesh(study: &Study, kept: &Kept) -> String {
     };
     let file = kept.file.as_deref().map_or_else(
         || "not written; give -o FOLDER to keep it".to_owned(),
-        |file| format!("written to {}", plain(file)),
+        |file| format!("written to {} and .3mf", plain(file)),
     );
     format!(
         "mesh       {} triangles, {}, {file}\n{}",

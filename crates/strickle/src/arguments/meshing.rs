@@ -33,7 +33,7 @@ pub(crate) struct Meshing {
     #[arg(long, value_name = "RATIO")]
     pub(crate) aspect: Option<f64>,
 
-    /// Refuse more triangles than this; they take some 250 bytes each while they are made and proved
+    /// Refuse more triangles than this; they take some 140 bytes each while they are made and proved
     #[arg(long, value_name = "COUNT", default_value_t = 50_000_000)]
     pub(crate) most: u64,
 

@@ -42,7 +42,7 @@ fn ways() -> impl Strategy<Value = Way> {
     )
 }
 
-/// The part's study and its mesh; none where a one-sided mesh is refused. A volume-true one always is made.
+/// The part's study and its mesh; none where a one-sided mesh would lie on itself, in a notch or an edge without an angle.
 fn meshed(part: &Turned, way: Way) -> Option<(Study, Made)> {
     let outline = part.outline(0, part.stations() - 1);
     let text = one_body("m", DENSITY, &format!("outline = {}", outline.steps()));
@@ -58,12 +58,26 @@ fn meshed(part: &Turned, way: Way) -> Option<(Study, Made)> {
         ..Options::within(way.within)
     };
     let plan = match study.plan(&options, None) {
-        // A one-sided mesh may have to be refused where faces come close to each other, as in a notch without an angle.
-        Err(MeshError::TooThin { .. }) if way.placement != Placement::VolumeTrue => return None,
+        Err(MeshError::TooThin { .. })
+            if way.placement != Placement::VolumeTrue
+                && has_a_cusp(&study.part.bodies[0].region) =>
+        {
+            return None;
+        }
         plan => plan.expect("a random part can be meshed"),
     };
     let made = Made::of(plan).expect("a planned mesh can be made");
     Some((study, made))
+}
+
+/// Whether somewhere two edges leave a corner in the same direction.
+fn has_a_cusp(region: &Region) -> bool {
+    let edges: Vec<_> = region.edges().collect();
+    let following = edges.iter().cycle().skip(1);
+    edges
+        .iter()
+        .zip(following)
+        .any(|(edge, next)| edge.tangent(1.0).dot(next.tangent(0.0)) < -1.0 + 1e-9)
 }
 
 /// Corners, edge middles and facet middles.

@@ -2,7 +2,9 @@
 //!
 //! A ring is a plane polygon: its corners have one radius and its segments' middles another, at one station. Between two rings
 //! a band keeps, in the section, to the hull of these four places ([`crate::ring`]). The hulls of two bands that are no
-//! neighbours must not meet. Neighbours share a ring and cannot cross near it.
+//! neighbours must not meet. Where all their rings have the same segments, the section is everywhere the same but for a factor
+//! on the radius, and the corners alone tell. Neighbours share a ring and
+//! cannot cross near it, but one may lie on the other.
 
 use crate::plan::{BodyPlan, Station};
 use profile::{DVec2, left_of, trig};
@@ -14,6 +16,8 @@ struct Piece {
     index: usize,
     count: usize,
     places: [DVec2; 4],
+    /// Segments of its rings, where they are the same; a point on the axis goes with any.
+    segments: Option<u32>,
 }
 
 impl RTreeObject for Piece {
@@ -43,6 +47,8 @@ pub(crate) fn first_conflict(plan: &BodyPlan, angle: f64) -> Option<DVec2> {
                     index,
                     count,
                     places: places(&a, &b, angle),
+                    segments: (a.segments == b.segments || a.is_pole() || b.is_pole())
+                        .then(|| a.segments.max(b.segments)),
                 })
             })
         })
@@ -51,10 +57,37 @@ pub(crate) fn first_conflict(plan: &BodyPlan, angle: f64) -> Option<DVec2> {
     tree.iter().find_map(|piece| {
         tree.locate_in_envelope_intersecting(piece.envelope())
             .filter(|other| (other.loop_index, other.index) > (piece.loop_index, piece.index))
-            .filter(|other| !neighbours(piece, other))
-            .find(|other| meet(&piece.places, &other.places))
+            .find(|other| {
+                if neighbours(piece, other) {
+                    piece.lies_on(other)
+                } else {
+                    piece.meets(other)
+                }
+            })
             .map(|_| piece.places[0])
     })
+}
+
+/// Cosine of the angle between two neighbours' chords below which the one goes back along the other: a millionth of a turn.
+const BACK: f64 = -1.0 + 1e-11;
+
+impl Piece {
+    /// Whether a neighbour goes back along this one: in a notch without an angle both keep to one side of the surface on the
+    /// same plane.
+    fn lies_on(&self, other: &Self) -> bool {
+        let way = |piece: &Self| (piece.places[2] - piece.places[0]).normalize_or_zero();
+        way(self).dot(way(other)) < BACK
+    }
+
+    fn meets(&self, other: &Self) -> bool {
+        let is_scaled = self.segments.is_some() && self.segments == other.segments;
+        if is_scaled {
+            // Of two rings the corners, without the middles.
+            let corners = |[a, _, b, _]: [DVec2; 4]| [a, a, b, b];
+            return meet(&corners(self.places), &corners(other.places));
+        }
+        meet(&self.places, &other.places)
+    }
 }
 
 /// Corners and segments' middles of two rings, r and z.
